@@ -1,0 +1,31 @@
+import react from '@vitejs/plugin-react';
+import { defineConfig } from 'vitest/config';
+
+export default defineConfig({
+  test: {
+    projects: [
+      {
+        test: { name: 'shared', environment: 'node', include: ['tests/shared/**/*.test.ts'] },
+      },
+      {
+        test: { name: 'contracts', environment: 'node', include: ['tests/contracts/**/*.test.ts'] },
+      },
+      {
+        plugins: [react()],
+        test: {
+          name: 'client',
+          environment: 'jsdom',
+          include: ['tests/src/**/*.test.{ts,tsx}'],
+          setupFiles: ['tests/support/client-setup.ts'],
+        },
+      },
+      {
+        test: {
+          name: 'server',
+          environment: 'node',
+          include: ['tests/server/**/*.test.ts'],
+        },
+      },
+    ],
+  },
+});
