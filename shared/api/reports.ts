@@ -1,11 +1,10 @@
 import { z } from 'zod';
+import { findingCodes, levels } from '../findings/finding.ts';
+import { checkReportSchema, maxReportBytes, verdicts } from '../report/check-report.ts';
 import { defineEndpoint } from './endpoint.ts';
 import { idSchema, momentSchema, slugSchema, tokenSchema } from './fields.ts';
 import { pageQuerySchema, pageSchema } from './page.ts';
 import { editionNumberSchema, rulesHashSchema } from './rules.ts';
-
-/** The most bytes of JSON a stored report may have. */
-export const reportLimitBytes = 2 * 1024 * 1024;
 
 /** The most bytes of gzip the overviews of one report may have. */
 export const overviewsLimitBytes = 8 * 1024 * 1024;
@@ -13,24 +12,18 @@ export const overviewsLimitBytes = 8 * 1024 * 1024;
 /** The media type overviews travel under, both ways: the bytes are gzip (RFC 6713). */
 export const overviewsMediaType = 'application/gzip';
 
-/** What is left to do after a check, as counted by the judge that made the report. */
-export const verdictSchema = z.strictObject({
-  mustFix: z.number().int().nonnegative(),
-  look: z.number().int().nonnegative(),
-  note: z.number().int().nonnegative(),
-});
-
 /**
  * One finding on which the server and the sender disagree: the server judged the measures in
  * the report again, with its own copy of the rules.
  */
 export const differenceSchema = z.strictObject({
-  /** `added`: only in the report that was sent. `missing`: only the server finds it. */
-  kind: z.enum(['added', 'missing', 'changed']),
-  code: z.string(),
-  /** The file's path in the report; null where the finding is about the whole set. */
-  path: z.string().nullable(),
-  detail: z.string(),
+  code: z.enum(findingCodes),
+  /** Paths as in the report; empty where the finding is about the whole set. */
+  files: z.array(z.string()),
+  /** Null where only the server finds it. */
+  sentLevel: z.enum(levels).nullable(),
+  /** Null where the server does not find it. Equal levels: something else in it differs. */
+  judgedLevel: z.enum(levels).nullable(),
 });
 export type Difference = z.output<typeof differenceSchema>;
 
@@ -41,7 +34,9 @@ export const reportSummarySchema = z.strictObject({
   projectId: idSchema,
   createdAt: momentSchema,
   createdBy: z.strictObject({ id: idSchema, name: z.string() }),
-  verdict: verdictSchema,
+  verdict: z.enum(verdicts),
+  /** Findings that remain, by level. */
+  counts: checkReportSchema.shape.counts,
   /** Null when the check ran against rules that no studio published. */
   rulesEdition: z
     .strictObject({ studioSlug: slugSchema, studioName: z.string(), number: editionNumberSchema })
@@ -56,11 +51,8 @@ export const reportSummarySchema = z.strictObject({
 });
 export type ReportSummary = z.output<typeof reportSummarySchema>;
 
-/** The report itself; its own schema lives in shared/report and is applied on both sides. */
-export const reportJsonSchema = z.record(z.string(), z.unknown());
-
 export const storedReportSchema = reportSummarySchema.extend({
-  report: reportJsonSchema,
+  report: checkReportSchema,
   differences: z.array(differenceSchema),
 });
 export type StoredReport = z.output<typeof storedReportSchema>;
@@ -79,13 +71,13 @@ export const storeReport = defineEndpoint({
   params: songParams,
   body: z.strictObject({
     submissionId: idSchema,
-    report: reportJsonSchema,
+    report: checkReportSchema,
     /** The published edition the check ran against, where there is one. */
     rulesEdition: z
       .strictObject({ studioSlug: slugSchema, number: editionNumberSchema })
       .nullable(),
   }),
-  bodyLimitBytes: reportLimitBytes + 4096,
+  bodyLimitBytes: maxReportBytes + 4096,
   response: reportSummarySchema,
 });
 

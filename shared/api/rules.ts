@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { houseRulesSchema } from '../rules/house-rules.ts';
 import { defineEndpoint } from './endpoint.ts';
 import { momentSchema, slugSchema } from './fields.ts';
 import { pageQuerySchema, pageSchema } from './page.ts';
@@ -20,8 +21,7 @@ export type EditionSummary = z.output<typeof editionSummarySchema>;
 
 export const editionSchema = editionSummarySchema.extend({
   studio: z.strictObject({ slug: slugSchema, name: z.string() }),
-  /** House rules as published; a reader parses them with the schema of shared/rules. */
-  rules: z.record(z.string(), z.unknown()),
+  rules: houseRulesSchema,
 });
 export type Edition = z.output<typeof editionSchema>;
 
