@@ -27,8 +27,6 @@ export type Places = z.infer<typeof placesSchema>;
  * clipping leaves, at whatever level it was turned down to afterwards.
  */
 const clippingSchema = z.strictObject({
-  /** Runs per side of the waveform added together. */
-  runs: z.number().int().nonnegative(),
   /** Samples in those runs. */
   samples: z.number().int().nonnegative(),
   longestRunFrames: frame,
@@ -48,6 +46,8 @@ export const channelMeasuresSchema = z.strictObject({
   dcOffset: z.number(),
   /** Mean over the 10 ms windows that sound (peak above -60 dBFS); 0 if none does. */
   soundingDcOffset: z.number(),
+  /** Clipped runs of both sides of the waveform together; `clipping` says more about them. */
+  clippedRuns: z.number().int().nonnegative(),
   clipping: clippingSchema,
   /** Float samples above 1.0 in magnitude. */
   overFullScale: placesSchema,
