@@ -12,6 +12,20 @@ export default defineConfig({
     // Nothing is inlined: the content security policy forbids data: WebAssembly and scripts.
     assetsInlineLimit: 0,
     sourcemap: true,
+    manifest: true,
+    rolldownOptions: {
+      input: {
+        main: 'index.html',
+        'service-worker': 'src/workers/download.service-worker.ts',
+      },
+      output: {
+        // A service worker rules over the folder it is served from and is found by its address.
+        entryFileNames: (chunk) =>
+          chunk.name === 'service-worker' ? '[name].js' : 'assets/[name]-[hash].js',
+      },
+    },
   },
+  // In development the service worker is served from src/ but must rule over the whole site.
+  server: { headers: { 'Service-Worker-Allowed': '/' } },
   worker: { format: 'es' },
 });
