@@ -13,11 +13,17 @@ export const momentSchema = z.iso.datetime();
 export const emailSchema = z.string().trim().toLowerCase().max(254).pipe(z.email());
 
 /**
- * A new password: 12 to 128 characters of any kind, spaces included, nothing trimmed. Length
- * is what OWASP ASVS 4.0 section 2.1 asks for (2.1.1: 12 or more; 2.1.2: 128 allowed, more
- * refused); it asks for no particular kinds of characters (2.1.9).
+ * A new password: 12 to 128 characters of any kind, spaces included, nothing trimmed, at least
+ * five of them different. Length is what OWASP ASVS 4.0 section 2.1 asks for (2.1.1: 12 or more;
+ * 2.1.2: 128 allowed, more refused); it asks for no particular kinds of characters (2.1.9).
+ * That a repeated handful is refused follows NIST SP 800-63B, section 5.1.1.2 (repetitive
+ * characters). Both numbers of sections from memory.
  */
-export const newPasswordSchema = z.string().min(12).max(128);
+export const newPasswordSchema = z
+  .string()
+  .min(12)
+  .max(128)
+  .refine((password) => new Set(password).size >= 5, { error: 'too-few-different-characters' });
 
 /** A password to be compared: any length that a stored one can have. */
 export const givenPasswordSchema = z.string().min(1).max(128);
