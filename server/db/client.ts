@@ -1,0 +1,33 @@
+import { drizzle, type PostgresJsDatabase } from 'drizzle-orm/postgres-js';
+import postgres from 'postgres';
+import * as schema from './schema.ts';
+
+export type Database = PostgresJsDatabase<typeof schema>;
+
+/** The database itself, or a transaction on it. */
+export type Transaction = Parameters<Parameters<Database['transaction']>[0]>[0];
+export type Queryable = Database | Transaction;
+
+export type DatabaseConnection = {
+  readonly db: Database;
+  /** Waits for running queries (at most five seconds) and closes every connection. */
+  close(): Promise<void>;
+};
+
+/**
+ * Opens a pool of at most `maxConnections`. Connecting is bounded to three seconds, a
+ * statement to ten, and after a refused connection the next attempt follows within a second,
+ * so a server whose PostgreSQL has gone answers soon and recovers soon.
+ */
+export function openDatabase(databaseUrl: string, maxConnections = 10): DatabaseConnection {
+  const client = postgres(databaseUrl, {
+    max: maxConnections,
+    connect_timeout: 3,
+    backoff: (attempt) => Math.min(1, 0.1 * 2 ** attempt),
+    idle_timeout: 60,
+    connection: { statement_timeout: 10_000, application_name: 'flightcase' },
+    // Notices of a migration ("relation exists, skipping") are not news.
+    onnotice: () => undefined,
+  });
+  return { db: drizzle(client, { schema }), close: () => client.end({ timeout: 5 }) };
+}
