@@ -1,0 +1,21 @@
+import type { ByteSource } from '../bytes/byte-source.ts';
+import type { Measures } from '../measure/measures.ts';
+import type { Overview } from '../measure/overview.ts';
+import type { WaveReading } from '../wave/track-format.ts';
+
+/** One file as it was dropped. `path` is relative to the dropped folder, with `/`. */
+export type SessionFile = { path: string; source: ByteSource };
+
+/**
+ * What reading and measuring one file gave: everything the later stages know about it. Plain
+ * data, so it crosses from a worker as it is.
+ */
+export type MeasuredFile = {
+  path: string;
+  bytes: number;
+  reading: WaveReading;
+  /** null for what is not measured (other audio, notes, unreadable). */
+  measures: Measures | null;
+  /** For drawing; null as above. */
+  overview: Overview | null;
+};
