@@ -24,6 +24,7 @@ export default defineConfig({
           name: 'server',
           environment: 'node',
           include: ['tests/server/**/*.test.ts'],
+          globalSetup: ['tests/support/test-databases.ts'],
         },
       },
     ],
