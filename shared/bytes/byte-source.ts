@@ -32,3 +32,16 @@ export function bytesSource(bytes: Uint8Array): ByteSource {
     },
   };
 }
+
+/** A source that holds something of the system (a file handle) until it is closed. */
+export type OpenByteSource = ByteSource & { close(): Promise<void> };
+
+/** One file of whatever was dropped: a folder on disk, a list of browser files, a zip. */
+export type DroppedFile = {
+  /** Relative to the dropped folder, parts joined by `/`, never starting with one. */
+  path: string;
+  /** Length in bytes when it was listed. */
+  size: number;
+  /** Throws AppError `no-access` (or `zip-refused` for an entry of a zip). */
+  open(): Promise<OpenByteSource>;
+};

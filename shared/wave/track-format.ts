@@ -69,6 +69,8 @@ export type WaveReading =
 
 export const unreadableReasons = [
   'empty-file',
+  /** Called audio by its name, but it begins like nothing we know (often a failed copy: zeros). */
+  'no-audio-header',
   'header-cut-short',
   'no-format-chunk',
   'no-data-chunk',
