@@ -27,34 +27,42 @@ export const houseRulesSchema = z.strictObject({
   schema: z.literal(houseRulesSchemaVersion),
   /** Shown above the rules: "How files must arrive at Harbour Lane". */
   title: z.string().max(200).default(''),
-  format: z.strictObject({
-    /** Allowed rates; empty: any, as long as all files agree. */
-    sampleRatesHz: z.array(z.number().int().min(8000).max(768_000)).default([]),
-    minimumBits: z.number().int().min(8).max(64).default(24),
-  }),
-  startAndLength: z.strictObject({
-    /** Lengths that differ by no more than this are the same length. */
-    lengthToleranceFrames: z.number().int().min(0).default(0),
-  }),
-  signal: thresholdsSchema,
+  format: z
+    .strictObject({
+      /** Allowed rates; empty: any, as long as all files agree. */
+      sampleRatesHz: z.array(z.number().int().min(8000).max(768_000)).default([]),
+      minimumBits: z.number().int().min(8).max(64).default(24),
+    })
+    .prefault({}),
+  startAndLength: z
+    .strictObject({
+      /** Lengths that differ by no more than this are the same length. */
+      lengthToleranceFrames: z.number().int().min(0).default(0),
+    })
+    .prefault({}),
+  signal: thresholdsSchema.prefault({}),
   names: namingSchema,
-  folder: z.strictObject({
-    /** Tokens {artist} {title} {tempo}; a token that is not known takes its separator along. */
-    template: z.string().min(1).max(200).default('{artist} - {title} - {tempo} BPM'),
-  }),
-  bring: z.strictObject({
-    roughMix: needSchema.default('required'),
-    /** The order of importance can stand in for the rough mix. */
-    orderInsteadOfRoughMix: z.boolean().default(false),
-    references: z.number().int().min(0).max(20).default(0),
-    orderOfImportance: needSchema.default('welcome'),
-    notes: needSchema.default('welcome'),
-    tempo: needSchema.default('required'),
-    /** Group ids whose processed parts must come with the clean signal beside them. */
-    diFor: z.array(z.string()).default([]),
-    dryFor: z.array(z.string()).default([]),
-    untunedFor: z.array(z.string()).default([]),
-  }),
+  folder: z
+    .strictObject({
+      /** Tokens {artist} {title} {tempo}; a token that is not known takes its separator along. */
+      template: z.string().min(1).max(200).default('{artist} - {title} - {tempo} BPM'),
+    })
+    .prefault({}),
+  bring: z
+    .strictObject({
+      roughMix: needSchema.default('required'),
+      /** The order of importance can stand in for the rough mix. */
+      orderInsteadOfRoughMix: z.boolean().default(false),
+      references: z.number().int().min(0).max(20).default(0),
+      orderOfImportance: needSchema.default('welcome'),
+      notes: needSchema.default('welcome'),
+      tempo: needSchema.default('required'),
+      /** Group ids whose processed parts must come with the clean signal beside them. */
+      diFor: z.array(z.string()).default([]),
+      dryFor: z.array(z.string()).default([]),
+      untunedFor: z.array(z.string()).default([]),
+    })
+    .prefault({}),
   /** What no file can show; the artist ticks each. */
   confirm: z
     .array(

@@ -24,8 +24,8 @@ export type GroupNature = (typeof groupNatures)[number];
 export const instrumentGroupSchema = z.strictObject({
   id: z.string().regex(/^[a-z0-9-]{1,40}$/),
   nature: z.enum(groupNatures),
-  /** Stands for the group in a name: `D`. */
-  letter: z.string().min(1).max(4),
+  /** Stands for the group in a name: `D`. Letters and digits, so that it is one word of a name. */
+  letter: z.string().regex(/^[\p{L}\p{N}]{1,4}$/u),
   /** Whole word: `Drums`. */
   label: z.string().min(1).max(40),
   /** Position in the palette, 0 to 11; the interface chooses the colours. */

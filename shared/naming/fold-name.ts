@@ -1,0 +1,45 @@
+/** Latin letters that decompose to nothing simpler, and what people type instead of them. */
+const plainLetters: Readonly<Record<string, string>> = {
+  ß: 'ss',
+  æ: 'ae',
+  œ: 'oe',
+  ø: 'o',
+  ð: 'd',
+  þ: 'th',
+  ł: 'l',
+  đ: 'd',
+  ħ: 'h',
+  ı: 'i',
+};
+
+const marks = /\p{M}/gu;
+
+/**
+ * One character as it is compared: compatibility forms (full width, ligatures) made plain, lower
+ * case, without accents. May be empty (a lone mark) or longer than the input.
+ */
+export function foldCharacter(character: string): string {
+  const code = character.charCodeAt(0);
+  if (character.length === 1 && code < 128) {
+    return code >= 65 && code <= 90 ? String.fromCharCode(code + 32) : character;
+  }
+  const bare = character.normalize('NFKD').replace(marks, '').toLowerCase();
+  let folded = '';
+  for (const letter of bare) folded += plainLetters[letter] ?? letter;
+  return folded;
+}
+
+/** A text as it is compared: see foldCharacter. */
+export function foldName(text: string): string {
+  let folded = '';
+  for (const character of text) folded += foldCharacter(character);
+  return folded;
+}
+
+/**
+ * The form in which two file names are the same file on a disk that ignores case: NFC, then full
+ * case folding as far as ECMAScript has it (upper, then lower, so that ß equals SS).
+ */
+export function clashKey(name: string): string {
+  return name.normalize('NFC').toUpperCase().toLowerCase().normalize('NFC');
+}
