@@ -1,10 +1,6 @@
-import type { ByteSource } from '../bytes/byte-source.ts';
 import type { Measures } from '../measure/measures.ts';
 import type { Overview } from '../measure/overview.ts';
 import type { WaveReading } from '../wave/track-format.ts';
-
-/** One file as it was dropped. `path` is relative to the dropped folder, with `/`. */
-export type SessionFile = { path: string; source: ByteSource };
 
 /**
  * What reading and measuring one file gave: everything the later stages know about it. Plain

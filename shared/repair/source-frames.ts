@@ -1,0 +1,69 @@
+import type { ByteSource } from '../bytes/byte-source.ts';
+import type { TrackFormat, WaveLayout } from '../wave/track-format.ts';
+import { bytesPerSample, type SampleForm } from './sample-codec.ts';
+
+/** A readable track among the dropped files. */
+export type TrackSource = {
+  source: ByteSource;
+  format: TrackFormat;
+  layout: WaveLayout;
+};
+
+/** The form the samples of a source have once they stand in a WAV file. */
+export function formOf({ format }: TrackSource): SampleForm {
+  return { encoding: format.encoding, bits: format.bits, containerBits: format.containerBits };
+}
+
+/**
+ * The sample data of a source from `fromFrame` to its end, in whole frames, in the form a WAV
+ * file has. Blocks are ours: they may be changed by whoever takes them, and stay valid.
+ * A source that ends early ends the stream early.
+ */
+export async function* sourceFrames(
+  track: TrackSource,
+  fromFrame: number,
+  signal?: AbortSignal,
+): AsyncGenerator<Uint8Array, void, void> {
+  const { layout, format } = track;
+  const frameBytes = layout.bytesPerFrame;
+  let left = (format.frames - fromFrame) * frameBytes;
+  if (left <= 0) return;
+  let carried = new Uint8Array(0);
+  const start = layout.dataOffset + fromFrame * frameBytes;
+  for await (const block of track.source.stream(start, signal)) {
+    signal?.throwIfAborted();
+    const fresh = block.length > left ? block.subarray(0, left) : block;
+    left -= fresh.length;
+    const usable = carried.length + fresh.length;
+    const whole = usable - (usable % frameBytes);
+    const joined = new Uint8Array(usable);
+    joined.set(carried);
+    joined.set(fresh, carried.length);
+    carried = joined.slice(whole);
+    if (whole > 0) {
+      const frames = joined.subarray(0, whole);
+      toWaveForm(frames, track);
+      yield frames;
+    }
+    if (left === 0) return;
+  }
+}
+
+/** Big-endian samples are turned round, signed 8-bit ones become unsigned; in place. */
+function toWaveForm(bytes: Uint8Array, { layout, format }: TrackSource): void {
+  const width = bytesPerSample(format);
+  if (width === 1) {
+    if (!layout.unsigned) for (let i = 0; i < bytes.length; i++) bytes[i]! ^= 0x80;
+    return;
+  }
+  if (!layout.bigEndian) return;
+  const half = width >> 1;
+  for (let at = 0; at < bytes.length; at += width) {
+    for (let i = 0; i < half; i++) {
+      const other = at + width - 1 - i;
+      const kept = bytes[at + i]!;
+      bytes[at + i] = bytes[other]!;
+      bytes[other] = kept;
+    }
+  }
+}
