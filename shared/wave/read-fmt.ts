@@ -1,4 +1,4 @@
-import type { UnreadableReason } from './track-format.ts';
+import { maxChannels, type UnreadableReason } from './track-format.ts';
 
 /** What a `fmt ` chunk says, once its contradictions are settled. */
 export type WaveEncoding = {
@@ -29,8 +29,6 @@ const extensibleTails = [
   // The B-format GUIDs of the ambisonic community, same tags
   '00002107d3118644c8c1ca000000',
 ];
-
-const maxChannels = 1024;
 
 /**
  * Reads the contents of a `fmt ` chunk: 16, 18 or 40 bytes and more.

@@ -1,7 +1,9 @@
 import type { BoundedReader } from '../bytes/bounded-reader.ts';
+import { otherFormatTags } from './format-tags.ts';
 import { readFmt, type FmtReading } from './read-fmt.ts';
-import type { TrackFormat, WaveReading } from './track-format.ts';
-import { walkChunks, type WalkedChunk } from './walk-chunks.ts';
+import { readRiffMetadata } from './read-riff-metadata.ts';
+import type { WaveReading } from './track-format.ts';
+import { placeOf, walkChunks, type WalkedChunk } from './walk-chunks.ts';
 
 /** A 32-bit size that means "see ds64" in RF64 and "unknown" in a streamed RIFF. */
 const sizeElsewhere = 0xffffffff;
@@ -75,7 +77,7 @@ export async function readRiff(
   }
   if (!fmtChunk) return { kind: 'unreadable', reason: 'no-format-chunk', byteOffset: endOffset };
   const fmt = readFmt(await reader.readUpTo(fmtChunk.contentOffset, fmtChunk.contentBytes, 64));
-  if (fmt.kind !== 'encoding') return unreadableFmt(fmt, fmtChunk);
+  if (fmt.kind !== 'encoding') return notPlain(fmt, fmtChunk);
   if (!dataChunk) return { kind: 'unreadable', reason: 'no-data-chunk', byteOffset: endOffset };
 
   const { channelMask, ...encoding } = fmt.encoding;
@@ -84,16 +86,15 @@ export async function readRiff(
   if (frames === 0) {
     return { kind: 'unreadable', reason: 'no-audio-in-data', byteOffset: dataChunk.contentOffset };
   }
-  const format: TrackFormat = { container, ...encoding, frames, timeReferenceFrames: null };
+  const { timeReferenceFrames, trackName, markers } = await readRiffMetadata(reader, chunks, {
+    sampleRateHz: encoding.sampleRateHz,
+    frames,
+  });
   return {
     kind: 'track',
-    format,
+    format: { container, ...encoding, frames, timeReferenceFrames },
     layout: {
-      chunks: chunks.map(({ id, contentOffset, contentBytes }) => ({
-        id,
-        contentOffset,
-        contentBytes,
-      })),
+      chunks: chunks.map(placeOf),
       dataOffset: dataChunk.contentOffset,
       dataBytes: frames * bytesPerFrame,
       promisedDataBytes: promised,
@@ -102,8 +103,8 @@ export async function readRiff(
       unsigned: encoding.containerBits === 8,
       channelMask,
     },
-    markers: [],
-    trackName: null,
+    markers,
+    trackName,
   };
 }
 
@@ -114,11 +115,13 @@ async function chunkFollows(reader: BoundedReader, offset: number): Promise<bool
   return walk.chunks.length > 0 && walk.endOffset === reader.size;
 }
 
-function unreadableFmt(
-  fmt: Exclude<FmtReading, { kind: 'encoding' }>,
-  chunk: WalkedChunk,
-): WaveReading {
-  return fmt.kind === 'other'
-    ? { kind: 'unreadable', reason: 'unsupported-encoding', byteOffset: chunk.contentOffset }
-    : { kind: 'unreadable', reason: fmt.reason, byteOffset: chunk.contentOffset + fmt.at };
+/** What is said about a file whose samples are not plain numbers. */
+function notPlain(fmt: Exclude<FmtReading, { kind: 'encoding' }>, chunk: WalkedChunk): WaveReading {
+  if (fmt.kind === 'impossible') {
+    return { kind: 'unreadable', reason: fmt.reason, byteOffset: chunk.contentOffset + fmt.at };
+  }
+  const known = otherFormatTags[fmt.tag];
+  return known
+    ? { kind: 'other-audio', formatName: `${known.name} in a WAV file`, lossy: known.lossy }
+    : { kind: 'unreadable', reason: 'unsupported-encoding', byteOffset: chunk.contentOffset };
 }

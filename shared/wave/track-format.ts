@@ -1,5 +1,8 @@
 import { z } from 'zod';
 
+/** More channels than this is no format but damage. */
+export const maxChannels = 1024;
+
 /**
  * What a measured file is, in the words of its own header. Plain data: it travels in reports.
  */
@@ -13,7 +16,7 @@ export const trackFormatSchema = z.strictObject({
   bits: z.number().int().min(1).max(64),
   /** Bits a sample takes up in the file, a multiple of 8. */
   containerBits: z.number().int().min(8).max(64),
-  channels: z.number().int().min(1).max(1024),
+  channels: z.number().int().min(1).max(maxChannels),
   /** Frames that are really there (a frame is one sample of every channel). */
   frames: z.number().int().nonnegative(),
   /** bext TimeReference (EBU Tech 3285): frames since midnight at the file's rate; null if absent. */

@@ -35,6 +35,11 @@ export function chunkId(bytes: Uint8Array, at: number): string {
   );
 }
 
+/** The place alone, as a layout keeps it. */
+export function placeOf({ id, contentOffset, contentBytes }: WalkedChunk): ChunkPlace {
+  return { id, contentOffset, contentBytes };
+}
+
 function isPrintable(id: string): boolean {
   return /^[\x20-\x7e]{4}$/.test(id);
 }
