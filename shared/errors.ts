@@ -40,6 +40,8 @@ export const appErrorStatus = {
   'disk-full': 507,
   /** A file or folder could not be opened at all. details: { path } */
   'no-access': 403,
+  /** A file changed after it was checked, so it cannot be packed. details: { path } */
+  'file-changed': 409,
   /** The WebAssembly meters could not be loaded. details: { reason } */
   'engine-failed': 500,
   /** A zip that cannot be read safely. details: { reason, entry } */
