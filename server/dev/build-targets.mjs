@@ -1,5 +1,6 @@
 import { existsSync } from 'node:fs';
 import { readFile } from 'node:fs/promises';
+import { dirname, join } from 'node:path';
 import { inCheckout } from './checkout.mjs';
 import { runProgram } from './processes.mjs';
 import { lastLines } from './setup-failure.mjs';
@@ -46,7 +47,8 @@ export async function listBuildTargets() {
 /** The meters in WebAssembly, one module an entry of the compiler's own configuration. */
 async function meterTarget() {
   const config = JSON.parse(await readFile(inCheckout(meterConfig), 'utf8'));
-  const outFile = config.targets?.release?.outFile;
+  // The compiler takes paths in its configuration as relative to it.
+  const outFile = join(dirname(meterConfig), config.targets.release.outFile);
   return {
     name: 'wasm',
     inputs: [...always, 'shared/measure/wasm'],

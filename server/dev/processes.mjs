@@ -1,6 +1,6 @@
 import { spawn } from 'node:child_process';
 import { readFileSync } from 'node:fs';
-import { clearTimeout, setTimeout } from 'node:timers';
+import { clearInterval, clearTimeout, setInterval, setTimeout } from 'node:timers';
 
 /**
  * Another system user to run a program as.
@@ -145,4 +145,22 @@ export function isRunning(pid) {
   } catch {
     return false;
   }
+}
+
+/**
+ * Calls back once npm, which started this process, is gone without having told it: npm passes
+ * signals on only while it lives. Does nothing for a process that npm did not start, which may
+ * outlive the shell it was started from.
+ *
+ * @param {() => void} callback
+ */
+export function whenNpmDies(callback) {
+  if (!process.env.npm_lifecycle_event) return;
+  const npm = process.ppid;
+  const watch = setInterval(() => {
+    if (process.ppid === npm) return;
+    clearInterval(watch);
+    callback();
+  }, 500);
+  watch.unref();
 }

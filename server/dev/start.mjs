@@ -10,14 +10,15 @@ import { installPackages } from './packages.mjs';
 import { firstFreePort, freePort, isPortFree, loopback } from './ports.mjs';
 import { keepClusterRunning, startCluster } from './postgres.mjs';
 import { postgresNeed } from './postgres-programs.mjs';
-import { killAllPrograms, runProgram, stopAllPrograms } from './processes.mjs';
+import { killAllPrograms, runProgram, stopAllPrograms, whenNpmDies } from './processes.mjs';
 import { createProgress } from './progress.mjs';
 import { describeFailure, lastLines, setupFailure } from './setup-failure.mjs';
 import { askHolder, claim } from './single-use.mjs';
 
 /**
  * `npm start` and `npm run dev`: from a fresh clone to a page in the browser, and everything
- * gone again on Ctrl-C or however this process ends.
+ * gone again on Ctrl-C or however this process ends. (The scripts in package.json say `exec`, so
+ * that npm's signals reach this process instead of a shell that would die without passing them on.)
  */
 
 const usualPort = 5180;
@@ -191,6 +192,7 @@ for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
     void end('Stopping.', ready ? 0 : 130);
   });
 }
+whenNpmDies(() => void end('npm is gone; stopping.', 1));
 // The terminal may be gone before we are.
 process.stdout.on('error', () => {});
 process.stderr.on('error', () => {});
