@@ -13,6 +13,9 @@ const frame = z.number().int().nonnegative();
 /** At most this many places are kept of anything; `count` keeps the true total. */
 export const maxPlaces = 200;
 
+/** Channels that are measured; a file with more is measured in its first 64. */
+export const maxMeasuredChannels = 64;
+
 export const frameRangeSchema = z.strictObject({ startFrame: frame, endFrame: frame });
 export type FrameRange = z.infer<typeof frameRangeSchema>;
 
@@ -53,7 +56,7 @@ export const channelMeasuresSchema = z.strictObject({
   overFullScale: placesSchema,
   /** Samples that are NaN or infinite; they count as 0 everywhere else. */
   notANumber: placesSchema,
-  /** First and last frame of the 10 ms windows whose peak is above -60 dBFS; null if silent. */
+  /** First and last frame with a sample above -60 dBFS; null if there is none. */
   firstSoundFrame: frame.nullable(),
   lastSoundFrame: frame.nullable(),
   /** Longest run of exact zeros; null if there is no zero sample. */
@@ -90,7 +93,7 @@ export type PairMeasures = z.infer<typeof pairMeasuresSchema>;
 
 export const measuresSchema = z.strictObject({
   frames: frame,
-  channels: z.array(channelMeasuresSchema).max(64),
+  channels: z.array(channelMeasuresSchema).max(maxMeasuredChannels),
   /** Neighbouring pairs (0,1), (2,3) ... */
   pairs: z.array(pairMeasuresSchema).max(32),
   /** Highest true peak of all channels, dBTP (ITU-R BS.1770-5 Annex 2); null if silent. */

@@ -1,0 +1,6 @@
+/** What the Node types leave out: the compiled modules that are handed to shared/measure. */
+declare namespace WebAssembly {
+  class Module {
+    constructor(bytes: ArrayBuffer | ArrayBufferView);
+  }
+}

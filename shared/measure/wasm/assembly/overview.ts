@@ -1,0 +1,60 @@
+import { Channel, granuleFrames } from './channel';
+import { highest, lowest } from './levels';
+
+/** The picture: lowest and highest sample of every column, kept as f32 pairs. */
+
+let framesPerColumn: i32 = 1;
+let columns: i32 = 0;
+
+/**
+ * Columns are as short as 2,048 of them allow. Where they are longer than a granule they are a
+ * whole number of granules, so that no granule belongs to two of them.
+ */
+export function openOverview(frames: f64, maxColumns: i32): void {
+  let perColumn = Math.max(1, Math.ceil(frames / <f64>maxColumns));
+  if (perColumn > <f64>granuleFrames) {
+    perColumn = Math.ceil(perColumn / <f64>granuleFrames) * <f64>granuleFrames;
+  }
+  framesPerColumn = <i32>perColumn;
+  columns = <i32>Math.ceil(frames / perColumn);
+}
+
+export function overviewFramesPerColumn(): i32 {
+  return framesPerColumn;
+}
+
+export function overviewColumns(): i32 {
+  return columns;
+}
+
+export function drawGranules<T extends number>(channel: Channel, frames: i32): void {
+  if (framesPerColumn < granuleFrames) {
+    for (let i = 0; i < frames; i++) {
+      const x = <f64>load<T>(channel.samples + <usize>i * sizeof<T>());
+      draw(channel, x, x, 1);
+    }
+    return;
+  }
+  for (let granule = 0; granule * granuleFrames < frames; granule++) {
+    const at = (<usize>granule) << 3;
+    const length = min(granuleFrames, frames - granule * granuleFrames);
+    draw(channel, load<f64>(lowest + at), load<f64>(highest + at), length);
+  }
+}
+
+function draw(channel: Channel, low: f64, high: f64, frames: i32): void {
+  if (channel.column >= columns) return;
+  const at = channel.overview + ((<usize>channel.column) << 3);
+  if (channel.columnFrames == 0) {
+    store<f32>(at, <f32>low);
+    store<f32>(at, <f32>high, 4);
+  } else {
+    store<f32>(at, min(load<f32>(at), <f32>low));
+    store<f32>(at, max(load<f32>(at, 4), <f32>high), 4);
+  }
+  channel.columnFrames += frames;
+  if (channel.columnFrames >= framesPerColumn) {
+    channel.column++;
+    channel.columnFrames = 0;
+  }
+}

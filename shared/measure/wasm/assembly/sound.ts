@@ -1,0 +1,39 @@
+import { Channel, granuleFrames } from './channel';
+import { highest, lowest } from './levels';
+
+/** First and last sample above -60 dBFS. */
+
+export const soundThreshold: f64 = 0.001;
+
+export function findSound<T extends number>(channel: Channel, start: f64, frames: i32): void {
+  const granules = (frames + granuleFrames - 1) / granuleFrames;
+  if (channel.firstSound < 0) {
+    for (let granule = 0; granule < granules; granule++) {
+      if (!sounds(granule)) continue;
+      let i = granule * granuleFrames;
+      while (!isSound(sampleAt<T>(channel, i))) i++;
+      channel.firstSound = start + <f64>i;
+      break;
+    }
+  }
+  for (let granule = granules - 1; granule >= 0; granule--) {
+    if (!sounds(granule)) continue;
+    let i = min((granule + 1) * granuleFrames, frames) - 1;
+    while (!isSound(sampleAt<T>(channel, i))) i--;
+    channel.lastSound = start + <f64>i;
+    return;
+  }
+}
+
+function sampleAt<T extends number>(channel: Channel, index: i32): f64 {
+  return <f64>load<T>(channel.samples + <usize>index * sizeof<T>());
+}
+
+function isSound(sample: f64): bool {
+  return Math.abs(sample) > soundThreshold;
+}
+
+function sounds(granule: i32): bool {
+  const at = (<usize>granule) << 3;
+  return load<f64>(highest + at) > soundThreshold || load<f64>(lowest + at) < -soundThreshold;
+}
