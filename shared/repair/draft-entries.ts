@@ -49,13 +49,12 @@ export function draftEntries(
   findings: readonly Finding[],
   chosen: readonly ChosenRepair[],
 ): Drafts {
-  const repairs = chosen.flatMap((choice) => {
-    const finding = findings.find((one) => answers(choice, one));
-    return finding ? [{ choice, finding }] : [];
-  });
+  const repairs = chosen.flatMap((choice) =>
+    apart(findings).flatMap((finding) => (answers(choice, finding) ? [{ choice, finding }] : [])),
+  );
   const leftOut = repairs
     .filter(({ choice }) => choice.repair === 'leave-out')
-    .map(({ choice, finding }) => leaveOut(choice, finding));
+    .flatMap(({ choice, finding }) => leaveOut(choice, finding));
   const gone = new Set(leftOut.map(({ path }) => path));
   const staying = new Map(
     tracks.filter(({ path }) => !gone.has(path)).map((track) => [track.path, track]),
@@ -80,23 +79,33 @@ export function draftEntries(
 
 type Repair = { choice: ChosenRepair; finding: Finding };
 
-function answers(choice: ChosenRepair, finding: Finding): boolean {
-  return (
-    finding.code === choice.code &&
-    finding.repairs.includes(choice.repair) &&
-    finding.files.length > 0 &&
-    (choice.repair === 'leave-out' || choice.repair === 'rename'
-      ? choice.files.every((path) => finding.files.includes(path))
-      : choice.files.length === finding.files.length &&
-        choice.files.every((path, index) => path === finding.files[index]))
+/** A line that stands for many files, as the findings those files would have alone. */
+function apart(findings: readonly Finding[]): Finding[] {
+  return findings.flatMap((finding) =>
+    finding.perFile
+      ? finding.perFile.map(({ path, ...rest }) => ({ ...finding, ...rest, files: [path] }))
+      : [finding],
   );
 }
 
-/** Of files with the same audio the first named in the choice stays unless the choice names one. */
-function leaveOut(choice: ChosenRepair, finding: Finding) {
-  const duplicate = finding.code === 'same-audio';
-  const path = choice.files.length === 1 ? choice.files[0]! : choice.files.at(-1)!;
-  return { path, reason: duplicate ? ('duplicate' as const) : ('chosen' as const) };
+/** A choice names the files of one finding, or of many of the same code at once. */
+function answers(choice: ChosenRepair, finding: Finding): boolean {
+  if (finding.code !== choice.code || !finding.repairs.includes(choice.repair)) return false;
+  const among = (some: readonly string[], all: readonly string[]) =>
+    some.every((path) => all.includes(path));
+  return (
+    finding.files.length > 0 &&
+    (among(finding.files, choice.files) ||
+      (choice.repair === 'leave-out' && among(choice.files, finding.files)))
+  );
+}
+
+/** The files that were named; of files that are the same, the first stays if all were named. */
+function leaveOut(choice: ChosenRepair, { code, files }: Finding): Drafts['leftOut'] {
+  const named = files.filter((path) => choice.files.includes(path));
+  const going = named.length > 1 && named.length === files.length ? named.slice(1) : named;
+  const reason = code === 'same-audio' ? 'duplicate' : 'chosen';
+  return going.map((path) => ({ path, reason }));
 }
 
 function sidesOf(finding: Finding): string[] {
@@ -144,8 +153,9 @@ function operationsFor({ choice, finding }: Repair, { format }: DraftedTrack): O
   const { args } = finding;
   switch (choice.repair) {
     case 'keep-one-side': {
-      const live = args['silentSide'] === 'left' ? 1 : 0;
-      return [{ kind: 'take-channel', channel: choice.channel ?? live }];
+      const { silentSide, gainDb } = args;
+      const right = silentSide === 'left' || (typeof gainDb === 'number' && gainDb > 0);
+      return [{ kind: 'take-channel', channel: choice.channel ?? (right ? 1 : 0) }];
     }
     case 'add-silence': {
       const difference = args['differenceFrames'];
