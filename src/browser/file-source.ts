@@ -1,4 +1,4 @@
-import type { ByteSource } from '#shared/bytes/byte-source.ts';
+import type { ByteSource, DroppedFile } from '#shared/bytes/byte-source.ts';
 import { AppError } from '#shared/errors.ts';
 
 /**
@@ -38,4 +38,14 @@ export function fileSource(file: File, path: string): ByteSource {
 function asAppError(cause: unknown, path: string): unknown {
   const unreadable = cause instanceof DOMException && cause.name !== 'AbortError';
   return unreadable ? new AppError('no-access', { path, reason: cause.name }) : cause;
+}
+
+/** A dropped file as the core knows it. Nothing stays open between reads, so closing is free. */
+export function fileOnDisk(path: string, file: File): DroppedFile {
+  return {
+    path,
+    size: file.size,
+    open: () =>
+      Promise.resolve({ ...fileSource(file, path), close: () => Promise.resolve(undefined) }),
+  };
 }

@@ -44,7 +44,9 @@ export function serveWorker<Api extends WorkerApi>(
     running.set(request.id, abort);
     void (async () => {
       try {
-        const output = await handlers[request.method]!(request.input, {
+        const handler: Handlers<WorkerApi>[string] | undefined = handlers[request.method];
+        if (!handler) throw new Error(`the worker has no ${request.method}`);
+        const output = await handler(request.input, {
           signal: abort.signal,
           report: (progress) => post({ id: request.id, progress }),
         });
@@ -109,7 +111,7 @@ export class WorkerLink<Api extends WorkerApi> {
       this.pending.set(id, {
         resolve,
         reject,
-        onProgress: options.onProgress as ((progress: unknown) => void) | undefined,
+        onProgress: options.onProgress,
         release: () => options.signal?.removeEventListener('abort', onAbort),
       });
       this.worker.postMessage({ id, method, input } satisfies Request, options.transfer ?? []);

@@ -1,0 +1,11 @@
+import type { MeasuredFile } from '#shared/session/measured-file.ts';
+
+export type MeasureInput = { path: string; file: File };
+export type MeasureOutput = MeasuredFile;
+
+/** What a measuring worker does: load the engine once, then one file at a time. */
+export type MeasureApi = {
+  load: { input: WebAssembly.Module; progress: never; output: null };
+  /** Progress is bytes read so far. */
+  measure: { input: MeasureInput; progress: number; output: MeasureOutput };
+};
