@@ -113,6 +113,11 @@ const argumentSchema = z.union([
   z.array(z.string()).max(500),
 ]);
 
+const argumentsSchema = z.record(z.string(), argumentSchema);
+
+/** A line that stands for many files keeps at most this many places of each. */
+export const maxSharedRanges = 20;
+
 /**
  * One thing found. About one file (`files` has one path) or about several (a session finding).
  * `args` are the numbers and words its sentences need, typed a code at a time in the catalogue,
@@ -126,10 +131,26 @@ export const findingSchema = z.strictObject({
   channel: z.number().int().nonnegative().nullable(),
   places: z.number().int().nonnegative(),
   ranges: z.array(findingRangeSchema).max(maxFindingRanges),
-  args: z.record(z.string(), argumentSchema),
+  args: argumentsSchema,
   /** Place in the house rules this comes from, dotted: `signal.ceilingDbfs`. */
   rule: z.string(),
   repairs: z.array(z.enum(repairKinds)),
   answer: z.enum(answerKinds).nullable(),
+  /**
+   * Only on a session line that stands for the same finding in at least half of the files: what
+   * each of `files` would have said alone. `args` are then those of the worst of them, `places`
+   * is the sum and `ranges` is empty.
+   */
+  perFile: z
+    .array(
+      z.strictObject({
+        path: z.string(),
+        channel: z.number().int().nonnegative().nullable(),
+        places: z.number().int().nonnegative(),
+        ranges: z.array(findingRangeSchema).max(maxSharedRanges),
+        args: argumentsSchema,
+      }),
+    )
+    .optional(),
 });
 export type Finding = z.infer<typeof findingSchema>;

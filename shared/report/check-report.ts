@@ -1,5 +1,7 @@
 import { z } from 'zod';
+import { comparisonSchema } from '../compare/comparison.ts';
 import { findingSchema, levels } from '../findings/finding.ts';
+import { judgedReadingSchema } from '../judge/judged-session.ts';
 import { measuresSchema } from '../measure/measures.ts';
 import { operationSchema } from '../repair/repair-plan.ts';
 import { fileRoles, sessionInformationSchema } from '../session/session-information.ts';
@@ -15,13 +17,15 @@ export const maxReportBytes = 2 * 1024 * 1024;
 export const verdicts = ['ready', 'look', 'must-fix'] as const;
 
 /** A finding about one file stands with its file, so it does not repeat the path. */
-const fileFindingSchema = findingSchema.omit({ files: true });
+const fileFindingSchema = findingSchema.omit({ files: true, perFile: true });
 
 export const reportFileSchema = z.strictObject({
   /** Relative to the dropped folder, with `/`. */
   path: z.string(),
   bytes: z.number().int().nonnegative(),
   role: z.enum(fileRoles),
+  /** What the reader made of it; with format and measures this is what the judge needs. */
+  reading: judgedReadingSchema,
   /** null for what is not measured (other audio, notes, unreadable). */
   format: trackFormatSchema.nullable(),
   measures: measuresSchema.nullable(),
@@ -52,6 +56,8 @@ export const checkReportSchema = z.strictObject({
     frames: z.number().int().nullable(),
     /** Whether it is proven that all tracks begin at the same moment. */
     startsProven: z.boolean(),
+    /** What second reads found out about files against each other: the judge's other input. */
+    comparison: comparisonSchema,
     findings: z.array(findingSchema),
   }),
   package: z.strictObject({
