@@ -1,4 +1,4 @@
-import { decodeUtf8 } from './chunk-text.ts';
+import { decodeLatin1, decodeUtf8 } from './chunk-text.ts';
 import { scanXml, xmlText, type XmlElement } from './scan-xml.ts';
 
 /** What an iXML chunk tells about one file. */
@@ -12,15 +12,18 @@ export type IxmlReading = {
 /** More than any iXML chunk needs that was met; a longer one is not read. */
 export const maxIxmlBytes = 512 * 1024;
 
-export type IxmlDocument = { text: string; elements: XmlElement[] };
+/** `latin1`: the text was no UTF-8, each of its characters is one byte. */
+export type IxmlDocument = { text: string; elements: XmlElement[]; latin1: boolean };
 
-/** null where the bytes are no well-formed UTF-8 XML with the root BWFXML. */
+/** null where the bytes are no well-formed XML with the root BWFXML. */
 export function parseIxml(bytes: Uint8Array): IxmlDocument | null {
   let end = bytes.length;
   while (end > 0 && bytes[end - 1] === 0) end -= 1;
-  const text = decodeUtf8(bytes.subarray(0, end));
-  const elements = text === null ? null : scanXml(text);
-  return text !== null && elements?.[0]?.path === 'BWFXML' ? { text, elements } : null;
+  const contents = bytes.subarray(0, end);
+  const utf8 = decodeUtf8(contents);
+  const text = utf8 ?? decodeLatin1(contents);
+  const elements = scanXml(text);
+  return elements?.[0]?.path === 'BWFXML' ? { text, elements, latin1: utf8 === null } : null;
 }
 
 /** Reads the contents of an iXML chunk (the open iXML specification: SPEED, TRACK_LIST). */
