@@ -11,5 +11,7 @@ export function inCheckout(...parts) {
   return join(checkout, ...parts);
 }
 
-/** Twelve hexadecimal digits that stand for this checkout's place on this machine. */
-export const checkoutHash = createHash('sha256').update(checkout).digest('hex').slice(0, 12);
+/** Twelve hexadecimal digits that stand for a folder's place on this machine. */
+export function hashOfPlace(/** @type {string} */ folder) {
+  return createHash('sha256').update(folder).digest('hex').slice(0, 12);
+}

@@ -1,6 +1,6 @@
 import { mkdir, stat } from 'node:fs/promises';
 import { basename, dirname, join } from 'node:path';
-import { checkout, checkoutHash, inCheckout } from './checkout.mjs';
+import { checkout, hashOfPlace } from './checkout.mjs';
 import { runProgram } from './processes.mjs';
 import { setupFailure } from './setup-failure.mjs';
 
@@ -13,7 +13,7 @@ import { setupFailure } from './setup-failure.mjs';
  */
 
 /** Where clusters go that cannot live in the checkout. */
-const elsewhere = '/var/lib/flightcase';
+const systemFolder = '/var/lib/flightcase';
 
 /** @param {string} path */
 async function ownerOf(path) {
@@ -53,10 +53,14 @@ async function canReach(owner, folder) {
  * that the next start finds it again. Creates the folder above it.
  *
  * @param {string} name
+ * @param {{ folder?: string, elsewhere?: string }} [places]
  * @returns {Promise<ClusterHome>}
  */
-export async function chooseClusterHome(name) {
-  const near = inCheckout('.data', name);
+export async function chooseClusterHome(
+  name,
+  { folder = checkout, elsewhere = systemFolder } = {},
+) {
+  const near = join(folder, '.data', name);
   await mkdir(dirname(near), { recursive: true });
   const nearOwner = await ownerOf(near);
   if (process.getuid?.() !== 0) {
@@ -71,7 +75,7 @@ export async function chooseClusterHome(name) {
 
   // A cluster that an ordinary user began stays theirs.
   const owner = nearOwner && nearOwner.uid !== 0 ? nearOwner : await systemUser();
-  const far = join(elsewhere, `${basename(checkout)}-${checkoutHash}`, name);
+  const far = join(elsewhere, `${basename(folder)}-${hashOfPlace(folder)}`, name);
   const farExists = (await ownerOf(far)) !== null;
   const reachable = await canReach(owner, dirname(near));
   if (reachable && (nearOwner || !farExists)) return { path: near, owner };

@@ -20,7 +20,9 @@ export function describeFailure(/** @type {unknown} */ error) {
 /** True where the system or a program's output says that the disk is full. */
 export function saysDiskFull(/** @type {unknown} */ said) {
   const text = said instanceof Error ? `${said.message} ${errorCode(said)}` : String(said);
-  return /No space left on device|ENOSPC|Disk quota exceeded|EDQUOT/.test(text);
+  return /No space left on device|Check free disk space|ENOSPC|Disk quota exceeded|EDQUOT/.test(
+    text,
+  );
 }
 
 /** The system's code of an error (`ENOENT`, `EADDRINUSE`), or an empty string. */

@@ -1,6 +1,6 @@
 import { connect, createServer } from 'node:net';
 import { setTimeout as delay } from 'node:timers/promises';
-import { checkoutHash } from './checkout.mjs';
+import { checkout, hashOfPlace } from './checkout.mjs';
 import { errorCode } from './setup-failure.mjs';
 
 /**
@@ -11,7 +11,7 @@ import { errorCode } from './setup-failure.mjs';
 
 /** @param {string} task */
 function socketName(task) {
-  return `\0flightcase-${checkoutHash}-${task}`;
+  return `\0flightcase-${hashOfPlace(checkout)}-${task}`;
 }
 
 /**
