@@ -11,7 +11,7 @@ export type Queryable = Database | Transaction;
 export type DatabaseConnection = {
   readonly db: Database;
   /** Waits for running queries (at most five seconds) and closes every connection. */
-  close(): Promise<void>;
+  readonly close: () => Promise<void>;
 };
 
 /**

@@ -27,7 +27,7 @@ export const foundStudio = defineEndpoint({
   response: studioSchema,
 });
 
-/** The studios the signed-in person owns or works for, by name. */
+/** The studios the signed-in person owns or works for, the oldest first. */
 export const listMyStudios = defineEndpoint({
   method: 'GET',
   path: '/api/studios',
