@@ -25,7 +25,7 @@ export async function readWave(source: ByteSource, name = ''): Promise<WaveReadi
     // Without a name nothing speaks against audio.
     return await recognise(source, name === '' || audioEnding.test(name));
   } catch (error) {
-    if (error instanceof AppError && error.code === 'no-access') {
+    if (error instanceof AppError && ['no-access', 'zip-refused'].includes(error.code)) {
       return { kind: 'unreadable', reason: 'could-not-be-read', byteOffset: 0 };
     }
     throw error;
