@@ -48,8 +48,8 @@ export default {
       section: ['1.625rem', { lineHeight: '2.125rem', letterSpacing: '-0.012em' }],
       title: ['2.125rem', { lineHeight: '2.5rem', letterSpacing: '-0.02em' }],
       display: [
-        'clamp(2.375rem, 1.2rem + 4.2vw, 4.25rem)',
-        { lineHeight: '1.04', letterSpacing: '-0.03em' },
+        'clamp(2.375rem, 1.1rem + 4.6vw, 5rem)',
+        { lineHeight: '1.02', letterSpacing: '-0.033em' },
       ],
     },
     borderRadius: {

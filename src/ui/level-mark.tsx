@@ -25,18 +25,32 @@ export const levelPaths: Record<Level, string> = {
   note: 'M8 4.2A3.8 3.8 0 1 1 8 11.8A3.8 3.8 0 1 1 8 4.2Z',
 };
 
-type LevelIconProps = { level: Level; sizePx?: number; className?: string };
+type LevelIconProps = {
+  level: Level;
+  sizePx?: number;
+  /** A rim in the colour of the sheet, for marks that lie on a picture. */
+  halo?: boolean;
+  className?: string;
+};
 
 /** The shape alone; hidden from screen readers, so words must stand beside it. */
-export function LevelIcon({ level, sizePx = 16, className = '' }: LevelIconProps) {
+export function LevelIcon({ level, sizePx = 16, halo = false, className = '' }: LevelIconProps) {
   return (
     <svg
       viewBox="0 0 16 16"
       width={sizePx}
       height={sizePx}
       aria-hidden="true"
-      className={`inline-block shrink-0 fill-current ${levelTextClass[level]} ${className}`}
+      className={`inline-block shrink-0 overflow-visible fill-current ${levelTextClass[level]} ${className}`}
     >
+      {halo && (
+        <path
+          d={levelPaths[level]}
+          className="stroke-sheet"
+          strokeWidth="4"
+          strokeLinejoin="round"
+        />
+      )}
       <path d={levelPaths[level]} fillRule="evenodd" />
     </svg>
   );
