@@ -15,8 +15,6 @@ export type ChecksumEngine = {
 /** Needs nothing of the platform. */
 export const plainChecksums: ChecksumEngine = { crc32, sha256: () => new Sha256() };
 
-export const checksumFileName = 'SHA256SUMS.txt';
-
 /** Length in bytes of the file before any checksum is known. */
 export function checksumFileBytes(names: readonly string[]): number {
   const encoder = new TextEncoder();

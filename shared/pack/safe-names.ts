@@ -7,6 +7,10 @@ import { clashKey } from '../naming/fold-name.ts';
  * GNU `sha256sum` both would have to escape them). At most 255 bytes a part (Linux NAME_MAX).
  */
 
+export const trackSheetFileName = 'Track sheet.pdf';
+export const reportFileName = 'check-report.json';
+export const checksumFileName = 'SHA256SUMS.txt';
+
 /** Room is kept for ` (1000)` and an extension behind the part that is cut. */
 const longestPartBytes = 255;
 

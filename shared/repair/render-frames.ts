@@ -22,7 +22,7 @@ const find = <Kind extends Operation['kind']>(operations: readonly Operation[], 
 /** What the operations make of the sources; the first one decides rate and sample form. */
 export function describeRender(
   operations: readonly Operation[],
-  sources: readonly TrackSource[],
+  sources: readonly Pick<TrackSource, 'format'>[],
 ): RenderedAudio {
   const first = sources[0];
   if (!first) throw new Error('an entry needs a source');

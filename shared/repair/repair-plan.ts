@@ -1,4 +1,5 @@
 import { z } from 'zod';
+import { repairKinds } from '../findings/finding.ts';
 
 const frames = z.number().int();
 
@@ -46,19 +47,7 @@ export type PlannedEntry = z.infer<typeof plannedEntrySchema>;
 
 /** A repair somebody chose. `files` as in the finding it answers. */
 export const chosenRepairSchema = z.strictObject({
-  repair: z.enum([
-    'rename',
-    'rewrite-container',
-    'split',
-    'join',
-    'keep-one-side',
-    'add-silence',
-    'leave-out',
-    'fade',
-    'gain',
-    'move',
-    'high-pass',
-  ]),
+  repair: z.enum(repairKinds),
   code: z.string(),
   files: z.array(z.string()).min(1),
   /** Which side to keep, how much gain, how far to move: only where the repair leaves a choice. */
@@ -69,13 +58,16 @@ export const chosenRepairSchema = z.strictObject({
 });
 export type ChosenRepair = z.infer<typeof chosenRepairSchema>;
 
+/** A dropped file that is not packed, and why. */
+export const leftOutSchema = z.strictObject({
+  path: z.string(),
+  reason: z.enum(['junk', 'not-packable', 'chosen', 'duplicate']),
+});
+export type LeftOut = z.infer<typeof leftOutSchema>;
+
+/** Every dropped file is in an entry or left out. */
 export const repairPlanSchema = z.strictObject({
   entries: z.array(plannedEntrySchema),
-  leftOut: z.array(
-    z.strictObject({
-      path: z.string(),
-      reason: z.enum(['junk', 'not-packable', 'chosen', 'duplicate']),
-    }),
-  ),
+  leftOut: z.array(leftOutSchema),
 });
 export type RepairPlan = z.infer<typeof repairPlanSchema>;

@@ -10,7 +10,7 @@ export type TrackSource = {
 };
 
 /** The form the samples of a source have once they stand in a WAV file. */
-export function formOf({ format }: TrackSource): SampleForm {
+export function formOf({ format }: Pick<TrackSource, 'format'>): SampleForm {
   return { encoding: format.encoding, bits: format.bits, containerBits: format.containerBits };
 }
 

@@ -1,9 +1,9 @@
 import { z } from 'zod';
 import { comparisonSchema } from '../compare/comparison.ts';
-import { findingSchema, levels } from '../findings/finding.ts';
+import { findingSchema, levels, repairKinds } from '../findings/finding.ts';
 import { judgedReadingSchema } from '../judge/judged-session.ts';
 import { measuresSchema } from '../measure/measures.ts';
-import { operationSchema } from '../repair/repair-plan.ts';
+import { leftOutSchema, operationSchema } from '../repair/repair-plan.ts';
 import { fileRoles, sessionInformationSchema } from '../session/session-information.ts';
 import { trackFormatSchema } from '../wave/track-format.ts';
 
@@ -37,6 +37,30 @@ export const reportFileSchema = z.strictObject({
 });
 export type ReportFile = z.infer<typeof reportFileSchema>;
 
+/** One file of the package. Beside its audio it says what was done to it, and to what. */
+export const reportEntrySchema = z.strictObject({
+  /** Paths in the dropped folder; two where left and right were joined. */
+  from: z.array(z.string()).min(1).max(2),
+  /** Path in the package folder. */
+  to: z.string(),
+  /** What was done, in the order of doing; empty for a copy under the same name. */
+  repairs: z.array(z.enum(repairKinds)),
+  operations: z.array(operationSchema),
+  bytes: z.number().int().nonnegative(),
+  /** CRC-32 of the packed file, 8 hex digits; null for what was not measured (notes, pictures). */
+  crc32: z
+    .string()
+    .regex(/^[0-9a-f]{8}$/)
+    .nullable(),
+  /** Only where a repair made other audio of it; else those of its source hold. */
+  format: trackFormatSchema.nullable(),
+  measures: measuresSchema.nullable(),
+});
+export type ReportEntry = z.infer<typeof reportEntrySchema>;
+
+/** What was left away so that the report stays within its size. */
+export const shortenings = ['nothing', 'places', 'measures'] as const;
+
 export const checkReportSchema = z.strictObject({
   schema: z.literal(reportSchemaVersion),
   measureVersion: z.number().int(),
@@ -45,10 +69,12 @@ export const checkReportSchema = z.strictObject({
   rulesHash: z.string().regex(/^[0-9a-f]{64}$/),
   /** Which meters ran: `wasm` or `oracle`. */
   engine: z.enum(['wasm', 'oracle']),
+  /** Of what is packed. */
   verdict: z.enum(verdicts),
   /** Before any repair was taken; equal to verdict where none was. */
   verdictBeforeRepairs: z.enum(verdicts),
   information: sessionInformationSchema,
+  /** As they were dropped, with what was found in them. */
   files: z.array(reportFileSchema),
   session: z.strictObject({
     sampleRateHz: z.number().int().nullable(),
@@ -56,22 +82,21 @@ export const checkReportSchema = z.strictObject({
     frames: z.number().int().nullable(),
     /** Whether it is proven that all tracks begin at the same moment. */
     startsProven: z.boolean(),
-    /** What second reads found out about files against each other: the judge's other input. */
-    comparison: comparisonSchema,
     findings: z.array(findingSchema),
+    comparison: comparisonSchema,
   }),
   package: z.strictObject({
     folderName: z.string(),
-    entries: z.array(
-      z.strictObject({
-        from: z.array(z.string()),
-        to: z.string(),
-        repairs: z.array(z.string()),
-        operations: z.array(operationSchema),
-      }),
-    ),
-    leftOut: z.array(z.strictObject({ path: z.string(), reason: z.string() })),
+    entries: z.array(reportEntrySchema),
+    leftOut: z.array(leftOutSchema),
+    /** What is still found once the repairs are made; `files` are paths in the package. */
+    findings: z.array(findingSchema),
+    /** Of the packed files; null where it is that of the dropped ones. */
+    comparison: comparisonSchema.nullable(),
   }),
+  /** Findings that remain, by level. */
   counts: z.record(z.enum(levels), z.number().int().nonnegative()),
+  /** What had to be left away to keep the report small: the places, or measures altogether. */
+  shortened: z.enum(shortenings),
 });
 export type CheckReport = z.infer<typeof checkReportSchema>;

@@ -1,0 +1,44 @@
+import type { SessionInformation } from '../session/session-information.ts';
+import type { RepairPlan } from './repair-plan.ts';
+import { fileNameOf, splitExtension } from '../pack/safe-names.ts';
+
+/**
+ * What was said about the dropped files, said about the entries they became: paths are those in
+ * the package. What was left out is no longer spoken of.
+ */
+export function followRepairs(
+  information: SessionInformation,
+  plan: RepairPlan,
+): SessionInformation {
+  const became = new Map<string, string[]>();
+  for (const { from, to } of plan.entries) {
+    for (const path of from) became.set(path, [...(became.get(path) ?? []), to]);
+  }
+  const follow = (path: string): string[] => became.get(path) ?? [];
+  const { tempo } = information;
+  const folderRoles = { 'Rough mix': 'rough-mix', References: 'reference', Notes: 'note' } as const;
+  return {
+    ...information,
+    tempo:
+      tempo?.kind === 'map' ? { kind: 'map', path: follow(tempo.path)[0] ?? tempo.path } : tempo,
+    roles: Object.fromEntries([
+      ...Object.entries(information.roles).flatMap(([path, role]) =>
+        follow(path).map((to) => [to, role] as const),
+      ),
+      ...plan.entries.flatMap(({ to, folder }) =>
+        folder === '' ? [] : [[to, folderRoles[folder]] as const],
+      ),
+    ]),
+    names: Object.fromEntries(
+      plan.entries
+        .filter(({ from }) => from.some((path) => information.names[path]))
+        .map(({ to }) => [to, splitExtension(fileNameOf(to)).base]),
+    ),
+    orderOfImportance: information.orderOfImportance
+      ? [...new Set(information.orderOfImportance.flatMap(follow))]
+      : null,
+    answers: information.answers.flatMap((answer) =>
+      answer.path === null ? [answer] : follow(answer.path).map((path) => ({ ...answer, path })),
+    ),
+  };
+}
