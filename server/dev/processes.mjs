@@ -108,7 +108,7 @@ export function startProgram(name, command, options = {}) {
     name,
     child,
     ended,
-    async stop(graceSeconds = 10) {
+    async stop(graceSeconds = 15) {
       child.kill(stopSignal);
       const force = setTimeout(() => child.kill('SIGKILL'), graceSeconds * 1000);
       await ended;
