@@ -110,6 +110,8 @@ type FormProps = {
   submitKind?: ButtonKind;
   /** Beside the button: another way. */
   aside?: ReactNode;
+  /** For a single field: the button stands beside it where there is room. */
+  inLine?: boolean;
   children?: ReactNode;
 };
 
@@ -120,16 +122,32 @@ export function Form({
   busyWords = 'One moment…',
   submitKind = 'primary',
   aside,
+  inLine = false,
   children,
 }: FormProps) {
+  const failure = form.failure !== undefined && <ErrorPanel error={form.failure} />;
+  const button = (
+    <Button type="submit" kind={submitKind} busy={form.busy} busyWords={busyWords}>
+      {submitWords}
+    </Button>
+  );
+  if (inLine)
+    return (
+      <form noValidate onSubmit={form.send} className="flex flex-col gap-4">
+        <div className="flex flex-col items-start gap-3 sm:flex-row">
+          <div className="w-full min-w-0 sm:grow">{children}</div>
+          {/* Level with the control, whose label is one line above it. */}
+          <div className="sm:pt-7">{button}</div>
+        </div>
+        {failure}
+      </form>
+    );
   return (
     <form noValidate onSubmit={form.send} className="flex flex-col gap-5">
       {children}
-      {form.failure !== undefined && <ErrorPanel error={form.failure} />}
+      {failure}
       <div className="flex flex-wrap items-center gap-x-4 gap-y-3">
-        <Button type="submit" kind={submitKind} busy={form.busy} busyWords={busyWords}>
-          {submitWords}
-        </Button>
+        {button}
         {aside}
       </div>
     </form>

@@ -41,7 +41,7 @@ export function RouteError() {
       <p className="mt-3 text-ink-2">{advice}</p>
       {requestId !== undefined && (
         <p className="mt-3 text-small text-ink-2">
-          Request <span className="figures break-all">{requestId}</span>
+          Request <span className="figures wrap-anywhere">{requestId}</span>
         </p>
       )}
       <div className="mt-6 flex flex-wrap gap-2">

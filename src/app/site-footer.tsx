@@ -1,10 +1,12 @@
 import { Link } from 'react-router-dom';
 import { ThemeSwitch } from '../ui/theme-switch.tsx';
+import { useSignedInHint } from './signed-in-hint.ts';
 
 const linkClass = 'inline-block py-0.5 underline-offset-4 hover:text-ink hover:underline';
 
 /** The frame's lower edge: the caution that belongs under every check, and the colours. */
 export function SiteFooter() {
+  const mayBeSignedIn = useSignedInHint();
   return (
     <footer className="mt-auto border-t border-line">
       <div className="mx-auto flex max-w-page flex-wrap items-start justify-between gap-x-12 gap-y-5 px-4 py-7 text-small text-ink-2 sm:px-7">
@@ -24,11 +26,13 @@ export function SiteFooter() {
                 For engineers
               </Link>
             </li>
-            <li>
-              <Link to="/register" className={linkClass}>
-                Make an account
-              </Link>
-            </li>
+            {!mayBeSignedIn && (
+              <li>
+                <Link to="/register" className={linkClass}>
+                  Make an account
+                </Link>
+              </li>
+            )}
           </ul>
         </nav>
         <ThemeSwitch />

@@ -19,7 +19,11 @@ export function SiteHeader() {
   return (
     <header className="border-b border-line">
       <div className="mx-auto flex max-w-page flex-wrap items-center gap-x-1 gap-y-1 px-4 sm:gap-x-4 py-2.5 sm:px-7">
-        <Link to="/" className="mr-auto py-1 md:mr-3" aria-label="Flightcase, front page">
+        <Link
+          to="/"
+          className="mr-auto flex min-h-9 items-center rounded md:mr-3"
+          aria-label="Flightcase, front page"
+        >
           <Wordmark />
         </Link>
         {mayBeSignedIn ? (

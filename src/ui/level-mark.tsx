@@ -70,7 +70,7 @@ export function LevelMark({ level, children, className = '' }: LevelMarkProps) {
       className={`inline-flex items-center gap-2 font-medium ${levelTextClass[level]} ${className}`}
     >
       <LevelIcon level={level} />
-      <span>{children ?? levelWords[level]}</span>
+      <span className="self-baseline">{children ?? levelWords[level]}</span>
     </span>
   );
 }

@@ -20,12 +20,12 @@ export function PageHeader({ title, crumbs = [], meta, actions }: PageHeaderProp
         {crumbs.length > 0 && (
           <nav aria-label="Where this page hangs" className="mb-2">
             <ol className="flex flex-wrap gap-x-2 text-small text-ink-2">
-              {crumbs.map((crumb) => (
+              {crumbs.map((crumb, index) => (
                 <li key={crumb.to} className="flex gap-2">
+                  {index > 0 && <span aria-hidden="true">/</span>}
                   <Link to={crumb.to} className="underline-offset-4 hover:text-ink hover:underline">
                     {crumb.label}
                   </Link>
-                  <span aria-hidden="true">/</span>
                 </li>
               ))}
             </ol>

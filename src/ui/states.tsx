@@ -85,7 +85,7 @@ export function ErrorNotice({ title, children, requestId, action }: ErrorNoticeP
         {children !== undefined && <div className="text-small text-ink-2">{children}</div>}
         {requestId !== undefined && (
           <p className="mt-1 text-small text-ink-2">
-            Request <span className="figures break-all">{requestId}</span>
+            Request <span className="figures wrap-anywhere">{requestId}</span>
           </p>
         )}
         {action !== undefined && <div className="mt-3 flex flex-wrap gap-2">{action}</div>}

@@ -32,8 +32,8 @@ export function ConfirmAddressPage() {
         <DoneNotice>
           <p>
             From now on you sign in with{' '}
-            <strong className="font-semibold break-all">{confirm.data.email}</strong>. Your other
-            devices are signed out.
+            <strong className="font-semibold wrap-anywhere">{confirm.data.email}</strong>. Your
+            other devices are signed out.
           </p>
         </DoneNotice>
         <div className="mt-5">

@@ -93,7 +93,7 @@ function JoinWithNewAccount({ token, email }: { token: string; email: string }) 
   return (
     <Form form={form} submitWords="Accept the invitation" busyWords="Making the account…">
       <p>
-        An account is made for <strong className="font-semibold break-all">{email}</strong>.
+        An account is made for <strong className="font-semibold wrap-anywhere">{email}</strong>.
       </p>
       <Field label="Your name" error={form.mistake('name')}>
         {(control) => <TextInput {...control} {...form.register('name')} autoComplete="name" />}

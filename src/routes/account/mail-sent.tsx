@@ -8,7 +8,7 @@ export function MailSent({ address, children }: MailSentProps) {
   return (
     <DoneNotice>
       <p>
-        A mail is on its way to <strong className="font-semibold break-all">{address}</strong>.{' '}
+        A mail is on its way to <strong className="font-semibold wrap-anywhere">{address}</strong>.{' '}
         {children}
       </p>
       <p className="mt-2 text-small text-ink-2">

@@ -48,13 +48,12 @@ function InvitationRow({ invitation, listKey }: { invitation: Invitation; listKe
   return (
     <li className="flex flex-wrap items-center justify-between gap-x-4 gap-y-2 px-5 py-3 sm:px-6">
       <div className="min-w-0">
-        <p className="break-all">{invitation.email}</p>
+        <p className="text-small wrap-anywhere">{invitation.email}</p>
         <p className="text-small text-ink-2">
           invited as {roleWords[invitation.role]}, until {dayWords(invitation.expiresAt)}
         </p>
       </div>
       <Button
-        kind="quiet"
         size="small"
         busy={revoke.isPending}
         aria-label={`Take back the invitation to ${invitation.email}`}
@@ -110,13 +109,12 @@ export function PeoplePanel<M extends Member>({
               >
                 <div className="min-w-0">
                   <p className="font-medium">{member.name}</p>
-                  <p className="text-small break-all text-ink-2">{member.email}</p>
+                  <p className="text-small wrap-anywhere text-ink-2">{member.email}</p>
                 </div>
                 <div className="flex items-center gap-2">
                   <span className="text-small text-ink-2">{roleWords[member.role]}</span>
                   {mayRemove(member) && (
                     <Button
-                      kind="quiet"
                       size="small"
                       aria-label={`Take off ${member.name}`}
                       onClick={() => {

@@ -1,7 +1,7 @@
 import type { Project } from '#shared/api/projects.ts';
 import { Link } from 'react-router-dom';
 import { dayWords } from '../../app/moments.ts';
-import { roleWords } from '../people/role-words.ts';
+import { roleInSentence } from '../people/role-words.ts';
 
 type ProjectRowsProps = {
   projects: readonly Project[];
@@ -32,7 +32,7 @@ export function ProjectRows({ projects, withStudio = false }: ProjectRowsProps) 
           <p className="text-small text-ink-2">
             {project.rulesEditionNumber !== null &&
               `rules edition ${String(project.rulesEditionNumber)} · `}
-            {withStudio && `you are ${roleWords[project.role]} · `}
+            {withStudio && `you are ${roleInSentence[project.role]} · `}
             since {dayWords(project.createdAt)}
           </p>
         </li>

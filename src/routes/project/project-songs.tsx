@@ -24,8 +24,8 @@ function AddSong({ projectId }: { projectId: string }) {
     },
   });
   return (
-    <Form form={form} submitWords="Add the song" busyWords="Adding…" submitKind="plain">
-      <Field label="Another song" error={form.mistake('title')}>
+    <Form form={form} submitWords="Add it" busyWords="Adding…" submitKind="plain" inLine>
+      <Field label="Add a song" error={form.mistake('title')}>
         {(control) => <TextInput {...control} {...form.register('title')} autoComplete="off" />}
       </Field>
     </Form>

@@ -8,7 +8,7 @@ import { Page } from '../../app/shell.tsx';
 import { ButtonLink } from '../../ui/button.tsx';
 import { PageHeader } from '../../ui/page-header.tsx';
 import { LoadingState } from '../../ui/states.tsx';
-import { roleWords } from '../people/role-words.ts';
+import { roleInSentence } from '../people/role-words.ts';
 import { ProjectPeople } from './project-people.tsx';
 import { ProjectSongs } from './project-songs.tsx';
 
@@ -61,7 +61,7 @@ export function ProjectPage() {
                 .
               </>
             )}{' '}
-            You are {roleWords[project.role]} here.
+            You are {roleInSentence[project.role]} here.
           </p>
         }
         actions={

@@ -18,7 +18,7 @@ function Verdict({ report }: { report: ReportSummary }) {
       <svg viewBox="0 0 16 16" width="16" height="16" aria-hidden="true">
         <path d="M2.5 8.5 6.5 12.5 13.5 4" fill="none" stroke="currentColor" strokeWidth="2.25" />
       </svg>
-      {verdictWords.ready}
+      <span className="self-baseline">{verdictWords.ready}</span>
     </span>
   );
 }

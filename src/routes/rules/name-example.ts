@@ -9,7 +9,7 @@ const typicalParts: Record<GroupNature, { instrument: string; detail: string; si
   keys: { instrument: 'Piano', detail: '', side: '' },
   synths: { instrument: 'Pad', detail: 'Warm', side: '' },
   orchestra: { instrument: 'Cello', detail: '', side: '' },
-  vocals: { instrument: 'Vocal', detail: 'Lead', side: '' },
+  vocals: { instrument: 'Lead Vocal', detail: '', side: '' },
   effects: { instrument: 'Riser', detail: '', side: '' },
 };
 

@@ -42,7 +42,7 @@ export function exportRules(rules: HouseRules): PlainRule[] {
           : `${list.format(sampleRatesHz.map(rateWords))}.`,
       why:
         rules.levels['sample-rate-not-allowed']?.why ??
-        'If your session runs at another rate, export at that one and say so: never convert.',
+        'Never convert a file to another rate: say so, or export it again.',
     },
     {
       what: 'Bit depth',
@@ -74,9 +74,7 @@ export function exportRules(rules: HouseRules): PlainRule[] {
 
 function needWords(need: 'required' | 'welcome' | 'not-needed', what: string): string | undefined {
   if (need === 'not-needed') return undefined;
-  return need === 'required'
-    ? `Send ${what}.`
-    : `${what.charAt(0).toUpperCase()}${what.slice(1)} is welcome.`;
+  return need === 'required' ? `Send ${what}.` : `Welcome: ${what}.`;
 }
 
 /** What comes along beside the tracks; what is not asked for is not listed. */
