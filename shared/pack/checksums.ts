@@ -8,7 +8,7 @@ import { Sha256 } from './sha256.ts';
 export type ChecksumEngine = {
   /** Continues a CRC-32 (as in zip) over `bytes`; 0 starts one. */
   crc32(bytes: Uint8Array, previous: number): number;
-  /** A new SHA-256; several may be open at a time. */
+  /** A new SHA-256. Files are packed one after the other, so one is open at a time. */
   sha256(): { update(bytes: Uint8Array): void; digestHex(): string };
 };
 
