@@ -17,7 +17,7 @@ import { securityHeaders } from './http/security-headers.ts';
 import { invitationRoutes } from './invitations/routes.ts';
 import type { MailQueue } from './mail/outbox.ts';
 import { projectRoutes } from './projects/routes.ts';
-import type { Rejudge } from './reports/compare-judgements.ts';
+import type { rejudge } from './reports/rejudge.ts';
 import { reportRoutes } from './reports/routes.ts';
 import { ruleRoutes } from './rules/routes.ts';
 import type { Services } from './services.ts';
@@ -28,7 +28,7 @@ export type AppParts = {
   mail: MailQueue;
   clock: Clock;
   log: Logger;
-  rejudge: Rejudge;
+  rejudge: typeof rejudge;
   /** Scheme, host and port of our own pages: the only ones that may change anything. */
   origin: string;
   /** The built client; null where something else serves it (Vite in development). */
@@ -42,9 +42,10 @@ export type AppParts = {
 /** The whole server as a function of its parts: it neither listens nor reads the environment. */
 export function createApp(parts: AppParts): Express {
   const { db, log, origin, clientDir } = parts;
-  const { clock, mail, rejudge } = parts;
+  const { clock, mail } = parts;
   const sessions = createSessions(db, clock);
-  const services: Services = { db, clock, mail, rejudge, sessions, limits: createLimits(db) };
+  const limits = createLimits(db);
+  const services: Services = { db, clock, mail, sessions, limits, rejudge: parts.rejudge };
 
   const app = express();
   app.disable('x-powered-by');

@@ -3,7 +3,7 @@ import type { Clock } from './clock.ts';
 import type { Database } from './db/client.ts';
 import type { Limits } from './http/limits.ts';
 import type { MailQueue } from './mail/outbox.ts';
-import type { Rejudge } from './reports/compare-judgements.ts';
+import type { rejudge } from './reports/rejudge.ts';
 
 /** What the parts of the server work with; each takes what it needs. */
 export type Services = {
@@ -12,5 +12,5 @@ export type Services = {
   mail: MailQueue;
   limits: Limits;
   sessions: Sessions;
-  rejudge: Rejudge;
+  rejudge: typeof rejudge;
 };

@@ -1,33 +1,47 @@
 import { isDeepStrictEqual } from 'node:util';
 import type { Difference } from '#shared/api/reports.ts';
 import type { Finding } from '#shared/findings/finding.ts';
+import { verdictOf, countLevels } from '#shared/judge/verdict.ts';
 import type { CheckReport } from '#shared/report/check-report.ts';
-import type { HouseRules } from '#shared/rules/house-rules.ts';
-
-/**
- * Judges the measures of a report with the given rules; null when the report was made by
- * another version of measures or judge, so that a difference would prove nothing.
- */
-export type Rejudge = (report: CheckReport, rules: HouseRules) => Finding[] | null;
+import type { Rejudgement } from './rejudge.ts';
 
 /** A report with more differences than this is no honest one; the rest adds nothing. */
 const maxDifferences = 200;
 
-/** Every finding of a report, those of its files too, as the judge would list them. */
-export function findingsOf(report: CheckReport): Finding[] {
+/** The findings about what was dropped, those of its files too, as the judge would list them. */
+function droppedFindings({ files, session }: CheckReport): Finding[] {
   return [
-    ...report.files.flatMap((file) =>
-      file.findings.map((finding) => ({ ...finding, files: [file.path] })),
+    ...files.flatMap(({ path, findings }) =>
+      findings.map((finding) => ({ ...finding, files: [path] })),
     ),
-    ...report.session.findings,
+    ...session.findings,
   ];
 }
 
 /**
- * Sets the findings somebody sent against those the server made of the same measures. Findings
- * are the same one when code, files and channel agree; everything else in them is compared.
+ * Whether verdicts and counts are what follows from the report's own findings. No honest report
+ * says otherwise, unless findings had to be left away.
  */
-export function compareJudgements(
+export function isConsistent(report: CheckReport): boolean {
+  if (report.shortened === 'measures') return true;
+  return (
+    report.verdict === verdictOf(report.package.findings) &&
+    report.verdictBeforeRepairs === verdictOf(droppedFindings(report)) &&
+    isDeepStrictEqual(report.counts, countLevels(report.package.findings))
+  );
+}
+
+/** Sets what somebody sent against what the server found in the same measures. */
+export function compareJudgements(report: CheckReport, judged: Rejudgement): Difference[] {
+  return [
+    ...compareFindings('dropped', droppedFindings(report), judged.dropped),
+    ...compareFindings('packed', report.package.findings, judged.packed),
+  ].slice(0, maxDifferences);
+}
+
+/** The same finding has the same code, files and channel; everything else in it is compared. */
+function compareFindings(
+  about: Difference['about'],
   sent: readonly Finding[],
   judged: readonly Finding[],
 ): Difference[] {
@@ -36,28 +50,36 @@ export function compareJudgements(
     const identity = identityOf(finding);
     unmatched.set(identity, [...(unmatched.get(identity) ?? []), finding]);
   }
-  const differences: Difference[] = [];
-  for (const finding of sent) {
+  const onlySent = sent.flatMap((finding) => {
     const own = unmatched.get(identityOf(finding))?.shift();
-    if (own && isDeepStrictEqual(own, finding)) continue;
-    differences.push(differenceBetween(finding, own));
-  }
-  for (const finding of [...unmatched.values()].flat()) {
-    differences.push(differenceBetween(undefined, finding));
-  }
-  return differences.slice(0, maxDifferences);
+    return own && isSame(own, finding) ? [] : [differenceBetween(about, finding, own)];
+  });
+  const onlyJudged = [...unmatched.values()]
+    .flat()
+    .map((finding) => differenceBetween(about, undefined, finding));
+  return [...onlySent, ...onlyJudged];
+}
+
+/** As JSON has them: a report has been through it. */
+function isSame(judged: Finding, sent: Finding): boolean {
+  return isDeepStrictEqual(JSON.parse(JSON.stringify(judged)), JSON.parse(JSON.stringify(sent)));
 }
 
 function identityOf({ code, files, channel }: Finding): string {
   return JSON.stringify([code, channel, files]);
 }
 
-function differenceBetween(sent: Finding | undefined, judged: Finding | undefined): Difference {
+function differenceBetween(
+  about: Difference['about'],
+  sent: Finding | undefined,
+  judged: Finding | undefined,
+): Difference {
   const either = sent ?? judged;
   if (!either) throw new Error('a difference between nothing and nothing');
   return {
+    about,
     code: either.code,
-    files: either.files,
+    files: either.files.slice(0, 20),
     sentLevel: sent?.level ?? null,
     judgedLevel: judged?.level ?? null,
   };

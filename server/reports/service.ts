@@ -18,7 +18,7 @@ import { findEdition } from '../rules/queries.ts';
 import { findRulesOfProduct } from '../rules/service.ts';
 import { newSecret } from '../secret.ts';
 import type { Services } from '../services.ts';
-import { compareJudgements, findingsOf } from './compare-judgements.ts';
+import { compareJudgements, isConsistent } from './compare-judgements.ts';
 import * as queries from './queries.ts';
 
 const gunzipAsync = promisify(gunzip);
@@ -68,10 +68,15 @@ export async function storeReport(
   if (Buffer.byteLength(JSON.stringify(report)) > maxReportBytes) {
     throw new AppError('too-large', { limitBytes: maxReportBytes });
   }
+  if (!isConsistent(report)) {
+    throw new AppError('invalid-request', {
+      issues: [{ path: 'body.report.verdict', message: 'does not follow from the findings' }],
+    });
+  }
   const edition = await findCheckedEdition(services, report, rulesEdition);
   const rules = edition ? edition.rules : await findRulesOfProduct(report.rulesHash);
   const judged = rules && services.rejudge(report, rules);
-  const differences = judged ? compareJudgements(findingsOf(report), judged) : [];
+  const differences = judged ? compareJudgements(report, judged) : [];
   try {
     const reportId =
       (await queries.insertReport(db, {

@@ -17,8 +17,10 @@ export const overviewsMediaType = 'application/gzip';
  * the report again, with its own copy of the rules.
  */
 export const differenceSchema = z.strictObject({
+  /** In the files as they were dropped, or as they are packed after repairs. */
+  about: z.enum(['dropped', 'packed']),
   code: z.enum(findingCodes),
-  /** Paths as in the report; empty where the finding is about the whole set. */
+  /** Paths as in the report, at most 20; empty where the finding is about the whole set. */
   files: z.array(z.string()),
   /** Null where only the server finds it. */
   sentLevel: z.enum(levels).nullable(),
@@ -44,7 +46,8 @@ export const reportSummarySchema = z.strictObject({
   rulesHash: rulesHashSchema,
   /**
    * `same`: the server judged again and agrees. `differs`: it does not, see the differences.
-   * `not-compared`: made by another version of measures or judge, so nothing can be said.
+   * `not-compared`: made by another version of measures or judge, under rules the server does
+   * not know, or shortened to stay within its size, so nothing can be said.
    */
   judgedAgain: z.enum(['same', 'differs', 'not-compared']),
   hasOverviews: z.boolean(),
