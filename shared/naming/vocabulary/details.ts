@@ -76,7 +76,7 @@ export const details: readonly DetailEntry[] = [
   {
     written: 'High',
     short: 'Hi',
-    forms: 'high, hi, hoch, haut, alta, alto, higher, hohe, hgh, high part, aigu',
+    forms: 'high, hi, hoch, haut, alta, higher, hohe, hgh, high part, aigu',
   },
   {
     written: 'Mid',
@@ -117,7 +117,7 @@ export const details: readonly DetailEntry[] = [
   { written: 'Drop', short: 'Drop', forms: 'drop, drops' },
   { written: 'Interlude', short: 'Itld', forms: 'interlude, itld, zwischenspiel, interludio' },
   { written: 'Outro', short: 'Out', forms: 'outro, outros, coda' },
-  { written: 'End', short: 'End', forms: 'end, ending, ende, fin' },
+  { written: 'End', short: 'End', forms: 'end, ending, ende' },
   {
     written: 'In',
     short: 'In',

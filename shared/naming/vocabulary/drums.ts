@@ -9,7 +9,7 @@ export const drums: readonly InstrumentEntry[] = [
       k sub +Sub`,
     misspelt:
       'kik, kck, kic, kikc, kicj, kick drm, b drum, bs drum, kik (i|in) +In, kik (o|out) +Out',
-    unsure: 'k, kk, bombo, ki +In, ko +Out',
+    unsure: 'bombo, ki +In, ko +Out',
   },
   {
     written: 'Snare',

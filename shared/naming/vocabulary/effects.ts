@@ -39,7 +39,8 @@ export const effects: readonly InstrumentEntry[] = [
   {
     written: 'Reverse',
     short: 'Rvs',
-    forms: 'reverse fx, fx reverse, reverse sound, rvs, reverse, reversed',
+    forms: 'reverse fx, fx reverse, reverse sound, reversed fx',
+    unsure: 'reverse, rvs, reversed',
     detail: 'Reverse',
   },
   {
@@ -64,7 +65,8 @@ export const effects: readonly InstrumentEntry[] = [
     written: 'Ambience',
     short: 'Amb',
     forms:
-      'ambience, amb, atmos, atmo, atmosphere, ambient, texture, textures, soundscape, scape, field recording, field rec, nature sounds, room tone',
+      'atmos, atmo, atmosphere, soundscape, scape, field recording, field rec, nature sounds, room tone',
+    unsure: 'ambience, amb, ambient, texture, textures',
     detail: 'Ambience',
   },
   { written: 'Foley', short: 'Foly', forms: 'foley, foly, footsteps' },
@@ -80,10 +82,11 @@ export const effects: readonly InstrumentEntry[] = [
   {
     written: 'Sample',
     short: 'Smpl',
-    forms: 'sample, samples, smpl, smp, samp, sampler',
+    forms: 'fx sample, sampler',
+    unsure: 'sample, samples, smpl, smp, samp',
     detail: 'Sample',
   },
-  { written: 'Loop', short: 'Loop', forms: 'loop, loops, lp', detail: 'Loop' },
+  { written: 'Loop', short: 'Loop', forms: 'loop fx', unsure: 'loop, loops, lp', detail: 'Loop' },
   {
     written: 'FX',
     short: 'FX',

@@ -46,10 +46,11 @@ export const orchestra: readonly InstrumentEntry[] = [
   {
     written: 'Trombone',
     short: 'Tbn',
-    forms: 'trombone, tbn, trb, trbn, posaune, trombon, bass trombone +Low, tromb',
+    forms: 'trombone, tbn, trb, trbn, posaune, trombon, tromb',
     misspelt: 'tromboen, trombne',
     unsure: 'tb, bone, bones',
   },
+  { written: 'Bass Trombone', short: 'BTbn', forms: 'bass trombone, b tbn, bass tbn' },
   {
     written: 'French Horn',
     short: 'FrHn',

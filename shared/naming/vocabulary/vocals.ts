@@ -9,10 +9,10 @@ export const vocals: readonly InstrumentEntry[] = [
     written: 'Lead Vocal',
     short: 'LV',
     forms: `(lead|ld|main|haupt|principal) ${vocal}, ${vocal} (lead|ld|main|principal|principale|solista),
-      lv, lvs, lead v, l v, ldv, ldvx, haupt stimme, haupt gesang, lead gesang, lead singer, l ${vocal},
+      lv, lvs, lead v, ldv, ldvx, haupt stimme, haupt gesang, lead gesang, lead singer,
       solo ${vocal}, voz cantante, prima voce, lead sung`,
     misspelt: `lead (vocla|voacl|vocl|vovals|vocasl), (laed|led|leed) ${vocal}`,
-    unsure: 'lead, leads, main, ld, lead main, lead line',
+    unsure: `lead, leads, main, ld, lead main, lead line, l v, l ${vocal}`,
   },
   {
     written: 'Backing Vocal',
