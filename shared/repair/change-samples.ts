@@ -6,7 +6,11 @@ import { decodeSamples, encodeSamples, type SampleForm } from './sample-codec.ts
  * (1992)): the error stays noise instead of distortion. The noise depends on nothing but the
  * place in the file, so a file rendered twice, or from its middle, has the same bytes.
  */
-export type SampleChange = { gainDb: number; cutoffHz: number | null };
+export type SampleChange = {
+  gainDb: number;
+  /** null without a high-pass. */
+  highPass: { cutoffHz: number; startLevels: readonly number[] } | null;
+};
 
 /**
  * A second-order Butterworth high-pass by the bilinear transform (coefficients as in the Audio EQ
@@ -53,6 +57,28 @@ function noise(place: number, draw: number): number {
 /** How much of the beginning the offset is taken from. */
 const settlingMs = 20;
 
+/** Mean of each channel over the first 20 ms: what a high-pass takes for the offset there. */
+export async function startLevels(
+  blocks: AsyncIterable<Uint8Array>,
+  form: SampleForm,
+  channels: number,
+  sampleRateHz: number,
+): Promise<number[]> {
+  const wanted = Math.round((settlingMs / 1000) * sampleRateHz) * channels;
+  const sums = new Array<number>(channels).fill(0);
+  let seen = 0;
+  for await (const block of blocks) {
+    const values = new Float64Array((block.length * 8) / form.containerBits);
+    decodeSamples(block, form, values);
+    for (let i = 0; i < values.length && seen < wanted; i++, seen++) {
+      const x = values[i]!;
+      if (Number.isFinite(x)) sums[seen % channels]! += x;
+    }
+    if (seen >= wanted) break;
+  }
+  return sums.map((sum) => (seen === 0 ? 0 : (sum * channels) / seen));
+}
+
 /**
  * Makes the function that changes blocks of whole frames in place, which must come in order from
  * `fromFrame` on (with a high-pass: from frame 0).
@@ -65,22 +91,18 @@ export function sampleChanger(
   fromFrame: number,
 ): (bytes: Uint8Array) => void {
   const gain = 10 ** (change.gainDb / 20);
-  const filters =
-    change.cutoffHz === null
-      ? null
-      : Array.from({ length: channels }, () => new HighPass(change.cutoffHz ?? 0, sampleRateHz));
+  const filters = change.highPass?.startLevels.map((level) => {
+    const filter = new HighPass(change.highPass?.cutoffHz ?? 0, sampleRateHz);
+    filter.settle(level);
+    return filter;
+  });
   const step = form.encoding === 'pcm' ? 2 ** -(form.bits - 1) : 0;
   let values = new Float64Array(0);
   let place = fromFrame * channels;
-  let settled = false;
   return (bytes) => {
     const count = (bytes.length * 8) / form.containerBits;
     if (values.length < count) values = new Float64Array(count);
     decodeSamples(bytes, form, values);
-    if (filters && !settled) {
-      settleAll(filters, values, count, Math.round((settlingMs / 1000) * sampleRateHz));
-      settled = true;
-    }
     for (let i = 0, channel = 0; i < count; i++, place++) {
       const x = values[i]!;
       let y = x;
@@ -94,17 +116,4 @@ export function sampleChanger(
     }
     encodeSamples(values, count, form, bytes);
   };
-}
-
-function settleAll(filters: HighPass[], values: Float64Array, count: number, frames: number): void {
-  const channels = filters.length;
-  for (const [channel, filter] of filters.entries()) {
-    let sum = 0;
-    let seen = 0;
-    for (let i = channel; i < count && seen < frames; i += channels, seen++) {
-      const x = values[i]!;
-      if (Number.isFinite(x)) sum += x;
-    }
-    filter.settle(seen > 0 ? sum / seen : 0);
-  }
 }

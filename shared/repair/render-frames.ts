@@ -1,5 +1,5 @@
 import { applyFades, type Fade } from './apply-fades.ts';
-import { sampleChanger } from './change-samples.ts';
+import { sampleChanger, startLevels } from './change-samples.ts';
 import type { Operation } from './repair-plan.ts';
 import { bytesPerSample, silenceByte, type SampleForm } from './sample-codec.ts';
 import { formOf, sourceFrames, type TrackSource } from './source-frames.ts';
@@ -112,13 +112,13 @@ async function* processed(
 
   let blocks = channelFrames(operations, sources, audio, started, signal);
   if (cutoffHz !== null || gainDb !== 0) {
-    const change = sampleChanger(
-      { gainDb, cutoffHz },
-      audio.form,
-      audio.channels,
-      audio.sampleRateHz,
-      started,
-    );
+    const { form, channels, sampleRateHz } = audio;
+    const start = () => channelFrames(operations, sources, audio, 0, signal);
+    const highPass =
+      cutoffHz === null
+        ? null
+        : { cutoffHz, startLevels: await startLevels(start(), form, channels, sampleRateHz) };
+    const change = sampleChanger({ gainDb, highPass }, form, channels, sampleRateHz, started);
     blocks = changed(blocks, change);
   }
   if (fades.length > 0) blocks = applyFades(blocks, fades, audio.form, audio.channels, started);
