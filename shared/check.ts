@@ -1,15 +1,17 @@
 import type { DroppedFile } from './bytes/byte-source.ts';
-import { emptyComparison, type Comparison } from './compare/comparison.ts';
+import type { Comparison } from './compare/comparison.ts';
 import { judgeSession, type Judgement } from './judge/judge-session.ts';
 import type { ChecksumEngine } from './pack/checksums.ts';
 import { packFiles, type Package } from './pack/pack-entries.ts';
 import { listPackedFiles } from './pack/packing-list.ts';
-import { followRepairs } from './repair/follow-repairs.ts';
+import { followComparison, followRepairs } from './repair/follow-repairs.ts';
 import { droppedTracks, measureEntries } from './repair/measure-entries.ts';
 import { planRepairs } from './repair/plan-repairs.ts';
+import { keepsSamples } from './repair/render-entry.ts';
 import type { ChosenRepair, RepairPlan } from './repair/repair-plan.ts';
 import type { CheckReport } from './report/check-report.ts';
 import type { HouseRules } from './rules/house-rules.ts';
+import { compareFiles } from './session/compare-files.ts';
 import { judgedFiles } from './session/judged-files.ts';
 import { measureAll, type MeasureAllOptions } from './session/measure-all.ts';
 import type { MeasureFile } from './session/measure-file.ts';
@@ -44,7 +46,7 @@ export async function checkSession(
   options: MeasureAllOptions = {},
 ): Promise<SessionCheck> {
   const measured = await measureAll(files, measureFile, options);
-  const comparison = emptyComparison();
+  const comparison = await compareFiles(measured, files, options.signal);
   return judgeCheck({ files: measured, comparison }, rules, information);
 }
 
@@ -71,7 +73,9 @@ export async function repairSession(
   const plan = planRepairs({ ...check, chosen, rules, information });
   const dropped = droppedTracks(files, check.files);
   const measured = await measureEntries(plan, dropped, measureFile, options);
-  const comparison = emptyComparison();
+  const comparison = plan.entries.every(keepsSamples)
+    ? followComparison(check.comparison, plan)
+    : await compareFiles(measured.files, measured.sources, options.signal);
   const after = judgeCheck(
     { files: measured.files, comparison },
     rules,

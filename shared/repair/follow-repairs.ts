@@ -1,3 +1,4 @@
+import type { Comparison } from '../compare/comparison.ts';
 import type { SessionInformation } from '../session/session-information.ts';
 import type { RepairPlan } from './repair-plan.ts';
 import { fileNameOf, splitExtension } from '../pack/safe-names.ts';
@@ -40,5 +41,22 @@ export function followRepairs(
     answers: information.answers.flatMap((answer) =>
       answer.path === null ? [answer] : follow(answer.path).map((path) => ({ ...answer, path })),
     ),
+  };
+}
+
+/** The comparison of the dropped files, said about entries whose samples are all untouched. */
+export function followComparison(comparison: Comparison, plan: RepairPlan): Comparison {
+  const became = new Map(plan.entries.flatMap(({ from, to }) => from.map((path) => [path, to])));
+  return {
+    matches: comparison.matches.flatMap((match) => {
+      const first = became.get(match.first);
+      const second = became.get(match.second);
+      return first && second ? [{ ...match, first, second }] : [];
+    }),
+    sides: comparison.sides.flatMap((sides) => {
+      const left = became.get(sides.left);
+      const right = became.get(sides.right);
+      return left && right ? [{ ...sides, left, right }] : [];
+    }),
   };
 }

@@ -26,7 +26,7 @@ export function nameDrafts(
   const named = nameFiles(paths, naming, { ...information, roles: {}, names });
   return drafts.map((draft, index) => {
     const path = paths[index]!;
-    const proposed = draft.rename ? named[index]?.name.proposedName : null;
+    const proposed = draft.rename ? named[index]?.proposedName : null;
     return names[path] ?? proposed ?? splitExtension(fileNameOf(path)).base;
   });
 }

@@ -1,6 +1,6 @@
 import type { ByteSource } from '../bytes/byte-source.ts';
 import type { TrackFormat, WaveLayout } from '../wave/track-format.ts';
-import { bytesPerSample, type SampleForm } from './sample-codec.ts';
+import { bytesPerSample, decodeSamples, type SampleForm } from './sample-codec.ts';
 
 /** A readable track among the dropped files. */
 export type TrackSource = {
@@ -47,6 +47,31 @@ export async function* sourceFrames(
     }
     if (left === 0) return;
   }
+}
+
+/**
+ * Frames [startFrame, startFrame + frames) of a source as samples, full scale = 1, one array a
+ * channel; shorter where the file ends earlier.
+ */
+export async function readFrames(
+  track: TrackSource,
+  startFrame: number,
+  frames: number,
+): Promise<Float32Array[]> {
+  const { format, layout } = track;
+  const wanted = Math.max(0, Math.min(frames, format.frames - startFrame));
+  const read = await track.source.read(
+    layout.dataOffset + startFrame * layout.bytesPerFrame,
+    wanted * layout.bytesPerFrame,
+  );
+  const found = Math.floor(read.length / layout.bytesPerFrame);
+  const bytes = read.slice(0, found * layout.bytesPerFrame);
+  toWaveForm(bytes, track);
+  const values = new Float64Array(found * format.channels);
+  decodeSamples(bytes, formOf(track), values);
+  return Array.from({ length: format.channels }, (_, channel) =>
+    Float32Array.from({ length: found }, (_, frame) => values[frame * format.channels + channel]!),
+  );
 }
 
 /** Big-endian samples are turned round, signed 8-bit ones become unsigned; in place. */

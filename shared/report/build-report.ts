@@ -62,7 +62,7 @@ export async function buildReport(input: ReportInput): Promise<CheckReport> {
         ...after.judgement.files.flatMap(({ findings }) => findings),
         ...after.judgement.session.findings,
       ],
-      comparison: after.comparison === check.comparison ? null : after.comparison,
+      comparison: after.comparison,
     },
     counts: after.judgement.counts,
     shortened: 'nothing',

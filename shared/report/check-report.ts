@@ -91,8 +91,8 @@ export const checkReportSchema = z.strictObject({
     leftOut: z.array(leftOutSchema),
     /** What is still found once the repairs are made; `files` are paths in the package. */
     findings: z.array(findingSchema),
-    /** Of the packed files; null where it is that of the dropped ones. */
-    comparison: comparisonSchema.nullable(),
+    /** Of the packed files, by their paths in the package. */
+    comparison: comparisonSchema,
   }),
   /** Findings that remain, by level. */
   counts: z.record(z.enum(levels), z.number().int().nonnegative()),

@@ -96,7 +96,7 @@ function withoutFileFindings(report: CheckReport): CheckReport {
     package: {
       ...report.package,
       findings: report.package.findings.map(withoutDetails).slice(0, 500),
-      comparison: null,
+      comparison: { matches: [], sides: [] },
     },
   };
 }
