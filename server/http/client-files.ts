@@ -33,7 +33,10 @@ export function clientFiles(clientDir: string): Router {
     response.sendFile(
       'index.html',
       { root, cacheControl: false, headers: { 'Cache-Control': 'no-cache' } },
-      next,
+      // Called after success too, when there is nothing left for anybody to answer.
+      (error) => {
+        if (error) next(error);
+      },
     );
   });
   return router;
