@@ -4,6 +4,8 @@ import { WorkerCrash, WorkerLink } from './bridge.ts';
 import type { MeasureApi, MeasureInput, MeasureOutput } from './measure-api.ts';
 
 export type MeasurePool = {
+  /** Workers at most. */
+  readonly size: number;
   /** Measures one file in the next free worker. A file whose worker crashes is tried once more. */
   measure(input: MeasureInput, options?: CallOptions<number>): Promise<MeasureOutput>;
   close(): void;
@@ -68,6 +70,7 @@ export function createMeasurePool(
   };
 
   return {
+    size,
     async measure(input, options = {}) {
       try {
         return await measureOnce(input, options);

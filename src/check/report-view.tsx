@@ -1,0 +1,41 @@
+import type { Overview } from '#shared/measure/overview.ts';
+import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
+import type { CheckReport } from '#shared/report/check-report.ts';
+import { anchorOf, FindingsPanel } from './findings-panel.tsx';
+import { SideBySide } from './side-by-side.tsx';
+
+type ReportViewProps = {
+  report: CheckReport;
+  overviews: ReadonlyMap<string, Overview>;
+  chosen?: readonly ChosenRepair[];
+  onChoose?: (repairs: readonly ChosenRepair[]) => void;
+  onUndo?: (repairs: readonly ChosenRepair[]) => void;
+};
+
+/** The picture and the findings beside it: on the bench, and of a stored report. */
+export function ReportView({ report, overviews, ...repairs }: ReportViewProps) {
+  return (
+    <div className="grid grow border-t border-line lg:grid-cols-[minmax(0,1fr)_26rem]">
+      <div className="bg-sheet px-4 py-6 sm:px-7">
+        <h2 className="sr-only">Side by side</h2>
+        <SideBySide
+          report={report}
+          overviews={overviews}
+          onFinding={(path, code) => showFinding(path, code)}
+        />
+      </div>
+      <aside aria-label="Findings" className="border-line bg-sheet max-lg:border-t lg:border-s">
+        <FindingsPanel report={report} {...repairs} />
+      </aside>
+    </div>
+  );
+}
+
+/** Brings a finding's text into view and the keyboard to it. */
+function showFinding(path: string, code: string): void {
+  const target = document.getElementById(
+    anchorOf({ code, files: [path] } as Parameters<typeof anchorOf>[0]),
+  );
+  target?.scrollIntoView({ block: 'nearest' });
+  target?.focus({ preventScroll: true });
+}

@@ -1,0 +1,71 @@
+import { useMutation, useQueryClient } from '@tanstack/react-query';
+import { useMemo } from 'react';
+import { Link } from 'react-router-dom';
+import type { Edition } from '#shared/api/rules.ts';
+import type { Overview } from '#shared/measure/overview.ts';
+import type { CheckReport } from '#shared/report/check-report.ts';
+import { errorText } from '../app/error-text.ts';
+import { useSession } from '../app/session-query.ts';
+import { Button } from '../ui/button.tsx';
+import { storeCheck } from './store-report.ts';
+
+type StoreReportProps = {
+  report: CheckReport;
+  overviews: ReadonlyMap<string, Overview>;
+  songTitle: string;
+  edition: Edition | null;
+  projectId: string | null;
+};
+
+/** Keeps the report for both sides; a visitor is told what signing in would bring. */
+export function StoreReport({
+  report,
+  overviews,
+  songTitle,
+  edition,
+  projectId,
+}: StoreReportProps) {
+  const user = useSession().data?.user;
+  const queries = useQueryClient();
+  // One id a report: pressing twice, or again after a lost answer, stores it once.
+  const submissionId = useMemo(() => (report ? crypto.randomUUID() : ''), [report]);
+  const storing = useMutation({
+    mutationFn: (toProject: string) =>
+      storeCheck({
+        submissionId,
+        projectId: toProject,
+        songTitle,
+        report,
+        overviews,
+        rulesEdition: edition && { studioSlug: edition.studio.slug, number: edition.number },
+      }),
+    onSuccess: () => queries.invalidateQueries(),
+  });
+  if (!user) return null;
+  if (storing.data) {
+    return (
+      <span role="status" className="self-center text-small">
+        Report stored.{' '}
+        <Link to={`/reports/${storing.data.id}`} className="text-link">
+          Open it
+        </Link>
+      </span>
+    );
+  }
+  return (
+    <>
+      {storing.isError && (
+        <span role="alert" className="self-center text-small text-must">
+          {errorText(storing.error).title}
+        </span>
+      )}
+      <Button
+        busy={storing.isPending}
+        busyWords="Storing…"
+        onClick={() => storing.mutate(projectId ?? user.privateProjectId)}
+      >
+        Store the report
+      </Button>
+    </>
+  );
+}

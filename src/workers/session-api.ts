@@ -1,0 +1,57 @@
+import type { RepairedSession, SessionCheck } from '#shared/check.ts';
+import type { Comparison } from '#shared/compare/comparison.ts';
+import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
+import type { CheckReport } from '#shared/report/check-report.ts';
+import type { HouseRules } from '#shared/rules/house-rules.ts';
+import type { MeasuredFile } from '#shared/session/measured-file.ts';
+import type { SessionInformation } from '#shared/session/session-information.ts';
+
+/** A dropped file as it crosses to a worker: the File itself is only a handle. */
+export type FileToRead = { path: string; file: File };
+
+/** Where the zip goes: into a file somebody picked, or through a port into a download. */
+export type ZipSink =
+  { kind: 'picked-file'; handle: FileSystemFileHandle } | { kind: 'port'; port: MessagePort };
+
+export type PackOutput = {
+  bytes: number;
+  /** The file was read back from disk and is what was written; null where that is impossible. */
+  verified: boolean | null;
+};
+
+/** Where the saving is: writing, then (for a picked file) reading back. */
+export type PackProgress = { step: 'writing' | 'verifying'; bytes: number };
+
+/** What the session worker does: everything that reads files again once they are measured. */
+export type SessionApi = {
+  load: { input: WebAssembly.Module; progress: never; output: null };
+  compare: {
+    input: { files: FileToRead[]; measured: MeasuredFile[] };
+    progress: never;
+    output: Comparison;
+  };
+  repair: {
+    input: {
+      files: FileToRead[];
+      rules: HouseRules;
+      information: SessionInformation;
+      check: SessionCheck;
+      chosen: ChosenRepair[];
+    };
+    progress: never;
+    output: RepairedSession;
+  };
+  /** The zip's name and exact length, before a byte of it is made. */
+  prepare: {
+    input: {
+      files: FileToRead[];
+      check: SessionCheck;
+      repaired: RepairedSession;
+      report: CheckReport;
+    };
+    progress: never;
+    output: { fileName: string; bytes: number };
+  };
+  /** Writes what `prepare` laid out. Throws AppError `disk-full`, `file-changed`, `cancelled`. */
+  pack: { input: ZipSink; progress: PackProgress; output: PackOutput };
+};

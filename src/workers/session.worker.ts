@@ -1,0 +1,53 @@
+import { packSession, repairSession } from '#shared/check.ts';
+import { createMeters } from '#shared/measure/create-meters.ts';
+import type { Package } from '#shared/pack/pack-entries.ts';
+import { compareFiles } from '#shared/session/compare-files.ts';
+import { measureHere, type MeasureFile } from '#shared/session/measure-file.ts';
+import { writeToPickedFile } from '../browser/write-picked-file.ts';
+import { loadChecksums } from '../browser/checksums.ts';
+import { fileOnDisk } from '../browser/file-source.ts';
+import { serveWorker } from './bridge.ts';
+import type { FileToRead, SessionApi } from './session-api.ts';
+import { sendThroughPort } from './stream-port.ts';
+
+let measureFile: MeasureFile | null = null;
+let prepared: Package | null = null;
+
+const dropped = (files: FileToRead[]) => files.map(({ path, file }) => fileOnDisk(path, file));
+
+serveWorker<SessionApi>({
+  load(module) {
+    measureFile = measureHere(createMeters(module));
+    return Promise.resolve(null);
+  },
+  compare({ files, measured }, { signal }) {
+    return compareFiles(measured, dropped(files), signal);
+  },
+  repair({ files, check, chosen, rules, information }, { signal }) {
+    if (!measureFile) throw new Error('load comes before repair');
+    const input = { files: dropped(files), rules, information, measureFile };
+    return repairSession(input, check, chosen, { signal });
+  },
+  async prepare({ files, check, repaired, report }) {
+    prepared = await packSession({
+      files: dropped(files),
+      check,
+      repaired,
+      report,
+      trackSheet: null,
+      checksums: await loadChecksums(),
+    });
+    return { fileName: prepared.fileName, bytes: prepared.bytes };
+  },
+  async pack(sink, { signal, report }) {
+    if (!prepared) throw new Error('prepare comes before pack');
+    if (sink.kind === 'picked-file') {
+      return writeToPickedFile(sink.handle, prepared.stream(signal), signal, report);
+    }
+    let bytes = 0;
+    await sendThroughPort(prepared.stream(signal), sink.port, (sent) =>
+      report({ step: 'writing', bytes: (bytes += sent) }),
+    );
+    return { bytes, verified: null };
+  },
+});
