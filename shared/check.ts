@@ -89,7 +89,7 @@ export type PackInput = {
   check: Pick<SessionCheck, 'files'>;
   repaired: RepairedSession;
   report: CheckReport;
-  trackSheet: Uint8Array | null;
+  trackSheet: Uint8Array;
   checksums: ChecksumEngine;
   signal?: AbortSignal | undefined;
 };

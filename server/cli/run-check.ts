@@ -2,7 +2,6 @@ import { readFile, stat } from 'node:fs/promises';
 import { resolve } from 'node:path';
 import { checkSession, packSession, repairSession, type CheckInput } from '#shared/check.ts';
 import { AppError } from '#shared/errors.ts';
-import { packageName } from '#shared/pack/package-name.ts';
 import { safeRepairs, unaskedRepairs } from '#shared/repair/choose-repairs.ts';
 import { buildReport } from '#shared/report/build-report.ts';
 import type { CheckReport } from '#shared/report/check-report.ts';
@@ -17,6 +16,7 @@ import {
 } from '#shared/session/session-information.ts';
 import type { CheckArguments } from './check-arguments.ts';
 import { loadMeters } from './load-meters.ts';
+import { loadSheetFont } from './load-sheet-font.ts';
 import { nodeChecksums } from './node-checksums.ts';
 import { progressLine } from './progress-line.ts';
 import { readIntake, type Intake } from './read-intake.ts';
@@ -99,7 +99,6 @@ async function checkAndPack(
     repaired,
     rules,
     information,
-    folderName: packageName(rules, information),
     engine: engine.name,
   });
   if (args.out !== null) {
@@ -108,7 +107,7 @@ async function checkAndPack(
       check,
       repaired,
       report,
-      trackSheet: null,
+      trackSheet: await drawSheet(report),
       checksums: nodeChecksums,
       signal,
     });
@@ -121,6 +120,12 @@ async function checkAndPack(
     );
   }
   return { report, problems: intake.problems };
+}
+
+/** Loaded late: the PDF library takes longer to load than a small session to check. */
+async function drawSheet(report: CheckReport): Promise<Uint8Array> {
+  const { drawTrackSheet } = await import('#shared/pack/track-sheet/draw-track-sheet.ts');
+  return drawTrackSheet(report, loadSheetFont);
 }
 
 /** The rules file has mistakes; the message names each with its place. */

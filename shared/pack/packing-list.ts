@@ -16,7 +16,7 @@ export type PackingInput = {
   /** What the plan's entries are, in its order. */
   packed: readonly MeasuredFile[];
   report: CheckReport;
-  trackSheet: Uint8Array | null;
+  trackSheet: Uint8Array;
   checksums: ChecksumEngine;
   signal?: AbortSignal | undefined;
 };
@@ -44,7 +44,7 @@ export async function listPackedFiles(input: PackingInput): Promise<PackedFile[]
   }
   return [
     ...files,
-    ...(input.trackSheet ? [madeFile(trackSheetFileName, input.trackSheet, checksums)] : []),
+    madeFile(trackSheetFileName, input.trackSheet, checksums),
     madeFile(reportFileName, writeReport(input.report), checksums),
   ];
 }

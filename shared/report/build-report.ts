@@ -2,6 +2,8 @@ import type { SessionCheck, RepairedSession } from '../check.ts';
 import type { Finding } from '../findings/finding.ts';
 import { judgeVersion } from '../judge/judge-session.ts';
 import { measureVersion } from '../measure/measures.ts';
+import { folderName } from '../naming/folder-name.ts';
+import { safeNamePart } from '../pack/safe-names.ts';
 import { hashRules } from '../rules/canonical-json.ts';
 import type { HouseRules } from '../rules/house-rules.ts';
 import type { MeasuredFile } from '../session/measured-file.ts';
@@ -16,7 +18,6 @@ export type ReportInput = {
   repaired: RepairedSession;
   rules: HouseRules;
   information: SessionInformation;
-  folderName: string;
   engine: 'wasm' | 'oracle';
 };
 
@@ -53,7 +54,8 @@ export async function buildReport(input: ReportInput): Promise<CheckReport> {
     }),
     session: { ...judgement.session, comparison: check.comparison },
     package: {
-      folderName: input.folderName,
+      // Names are checked once more: a package must unpack anywhere.
+      folderName: safeNamePart(folderName(input.rules.folder.template, information)),
       entries: plan.entries.map((entry, index) =>
         reportEntry(entry, describeRepairs(entry, plan, check.files), after.files[index]!),
       ),
