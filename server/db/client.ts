@@ -16,14 +16,14 @@ export type DatabaseConnection = {
 
 /**
  * Opens a pool of at most `maxConnections`. Connecting is bounded to three seconds, a
- * statement to ten, and after a refused connection the next attempt follows within a second,
- * so a server whose PostgreSQL has gone answers soon and recovers soon.
+ * statement to ten, and after a refused connection the next attempt follows within a quarter of
+ * a second, so a server whose PostgreSQL has gone answers soon and recovers soon.
  */
 export function openDatabase(databaseUrl: string, maxConnections = 10): DatabaseConnection {
   const client = postgres(databaseUrl, {
     max: maxConnections,
     connect_timeout: 3,
-    backoff: (attempt) => Math.min(1, 0.1 * 2 ** attempt),
+    backoff: (attempt) => Math.min(0.25, 0.02 * 2 ** attempt),
     idle_timeout: 60,
     connection: { statement_timeout: 10_000, application_name: 'flightcase' },
     // Notices of a migration ("relation exists, skipping") are not news.

@@ -1,11 +1,13 @@
 import { DrizzleQueryError } from 'drizzle-orm/errors';
 
 /**
- * SQLSTATE classes and codes (PostgreSQL manual, appendix A) that mean "the server is not there
- * for us now": 08 connection exception, 57P01 to 57P05 shutdown, crash, starting up, idle session,
- * 53300 too many connections, 57014 statement cancelled by its time limit.
+ * SQLSTATE classes and codes of a server that goes away or is not there yet (PostgreSQL manual,
+ * appendix A): 08 connection exception, 57P01 to 57P05 shutdown, crash, starting up, dropped
+ * database, idle session.
  */
-const awaySqlStates = /^(08...|57P0[1-5]|53300|57014)$/;
+const lostSqlStates = /^(08...|57P0[1-5])$/;
+/** The same for one that has too much to do: 53300 connections, 57014 cut off at its time limit. */
+const busySqlStates = /^(53300|57014)$/;
 
 /** Codes of the driver and of Node.js for a connection that cannot be made or was lost. */
 const awayCodes = new Set([
@@ -29,10 +31,16 @@ function driverError(error: unknown): Record<string, unknown> | null {
   return inner instanceof Error ? (inner as unknown as Record<string, unknown>) : null;
 }
 
-/** Whether the database could not be reached, so that trying again later is right. */
+/** Whether the connection could not be made, or broke while it was used. */
+export function isConnectionLost(error: unknown): boolean {
+  const code = driverError(error)?.code;
+  return typeof code === 'string' && (awayCodes.has(code) || lostSqlStates.test(code));
+}
+
+/** Whether the database cannot help now, so that trying again later is right. */
 export function isDatabaseAway(error: unknown): boolean {
   const code = driverError(error)?.code;
-  return typeof code === 'string' && (awayCodes.has(code) || awaySqlStates.test(code));
+  return isConnectionLost(error) || (typeof code === 'string' && busySqlStates.test(code));
 }
 
 /** Whether a statement failed on this unique constraint or index. */

@@ -4,6 +4,7 @@ import type { Endpoint, EndpointRequest, EndpointResponse } from '#shared/api/en
 import { AppError } from '#shared/errors.ts';
 import type { Person, Sessions } from '../accounts/sessions.ts';
 import { withDeadline } from './deadline.ts';
+import { createOutageGate } from './outage-gate.ts';
 
 /** JSON bodies of endpoints that say nothing else. */
 const defaultBodyLimitBytes = 64 * 1024;
@@ -65,6 +66,9 @@ export function bindForVisitors<E extends Endpoint>(
 /** Answers the bound endpoints. Expects the origin check and request ids before it. */
 export function endpointRouter(bound: readonly BoundEndpoint[], sessions: Sessions): Router {
   const router = Router({ caseSensitive: true, strict: true });
+  const gate = createOutageGate();
+  const inTime = <Result>(work: () => Promise<Result>) =>
+    gate.pass(() => withDeadline(requestDeadlineMs, work()));
   for (const { endpoint, forVisitors, handler } of bound) {
     const method = endpoint.method.toLowerCase() as Lowercase<Endpoint['method']>;
     router[method](
@@ -73,10 +77,7 @@ export function endpointRouter(bound: readonly BoundEndpoint[], sessions: Sessio
         // The log names a request by its pattern, never by its URL.
         response.locals.routePattern = endpoint.path;
         response.setHeader('Cache-Control', 'no-store');
-        const caller = await withDeadline(
-          requestDeadlineMs,
-          readCaller(sessions, request, response),
-        );
+        const caller = await inTime(() => readCaller(sessions, request, response));
         if (!caller.person && !forVisitors) throw new AppError('sign-in-required');
         response.locals.caller = caller;
         next();
@@ -85,7 +86,7 @@ export function endpointRouter(bound: readonly BoundEndpoint[], sessions: Sessio
       async (request, response) => {
         const input = parseInput(endpoint, request) as never;
         const caller = response.locals.caller as never;
-        send(endpoint, await withDeadline(requestDeadlineMs, handler(input, caller)), response);
+        send(endpoint, await inTime(() => handler(input, caller)), response);
       },
     );
   }
