@@ -1,47 +1,21 @@
 import { allocate } from './arena';
-
-/** Frames between two looks at what the samples did: the smallest unit of the quick pass. */
-export const granuleFrames: i32 = 64;
-export const granulesPerBlock: i32 = 16;
-/** Meters see the file in blocks of this many frames, counted from its first frame. */
-export const blockFrames: i32 = granuleFrames * granulesPerBlock;
-/** Frames of the block before that stay readable in front of the present one. */
-export const historyFrames: i32 = 256;
-/** Places kept of anything: `maxPlaces` in measures.ts. */
-export const maxPlaces: i32 = 200;
-/** Columns of the overview: `overviewColumns` in overview.ts. */
-export const maxColumns: i32 = 2048;
-
-/** Ranges of frames: the true count, and the first 200 places as pairs of f64. */
-@unmanaged
-export class Places {
-  count: f64;
-  kept: i32;
-  ranges: usize;
-}
-
-export function addPlace(places: Places, startFrame: f64, endFrame: f64): void {
-  places.count += 1;
-  if (places.kept == maxPlaces) return;
-  const at = places.ranges + ((<usize>places.kept) << 4);
-  store<f64>(at, startFrame);
-  store<f64>(at, endFrame, 8);
-  places.kept++;
-}
-
-export function newPlaces(): Places {
-  const places = changetype<Places>(allocate(offsetof<Places>()));
-  places.ranges = allocate((<usize>maxPlaces) << 4);
-  return places;
-}
+import { blockFrames, historyFrames } from './block';
+import { newSide, Side } from './clipping';
+import { Cycles, newCycles } from './cycles';
+import { newOutliers, Outliers } from './outliers';
+import { columns, sampleBytes } from './parameters';
+import { newPlaces, Places } from './places';
+import { floorBins } from './windows';
+import { Hash, newHash } from './xxh3';
 
 /** What is remembered of one channel between two blocks. */
 @unmanaged
 export class Channel {
   /** The block's first sample; the history lies in front of it. f32 or f64. */
   samples: usize;
-  /** The block's samples as little-endian bytes of the file's own depth. */
+  /** The block's samples as canonical bytes, where the file has several channels. */
   bytes: usize;
+  hash: Hash;
 
   lowest: f64;
   highest: f64;
@@ -56,19 +30,65 @@ export class Channel {
   firstSound: f64;
   lastSound: f64;
 
-  overFullScale: Places;
-  notANumber: Places;
+  windowPeak: f64;
+  windowSum: f64;
+  windowFrames: i32;
+  soundingSum: f64;
+  soundingFrames: f64;
+
+  floorPeak: f64;
+  floorFrames: i32;
+  floorWindows: f64;
+  floorHistogram: usize;
+
+  startEdgePeak: f64;
+  startEdgeRamps: bool;
+  tailPeak: f64;
+
+  truePeak: f64;
+  /** Peak of the granule before. */
+  previousPeak: f64;
+
+  /** Deeper than the deepest grid: on none. */
+  gridBits: i32;
+
+  upper: Side;
+  lower: Side;
+  cycles: Cycles;
+
+  /** The run of zeros that is going on, and whether the sound broke off in front of it. */
+  inZeros: bool;
+  zeroStart: f64;
+  abruptStart: bool;
+  /** The longest so far. */
+  silenceStart: f64;
+  silenceEnd: f64;
+  /** A run whose end still has to be looked at; none if the end is negative. */
+  pendingStart: f64;
+  pendingEnd: f64;
+  dropouts: Places;
+
+  overFullScale: Outliers;
+  notANumber: Outliers;
 }
 
-export function newChannel(sampleSize: usize, sampleBytes: usize): Channel {
+export function newChannel(sampleSize: usize): Channel {
   const channel = changetype<Channel>(allocate(offsetof<Channel>()));
-  const buffer = allocate(<usize>(historyFrames + blockFrames) * sampleSize);
+  const buffer = allocate(<usize>(historyFrames + blockFrames) * sampleSize + 64);
   channel.samples = buffer + <usize>historyFrames * sampleSize;
-  channel.bytes = allocate(<usize>blockFrames * sampleBytes + 16);
-  channel.overview = allocate((<usize>maxColumns) << 3);
+  channel.bytes = allocate(<usize>blockFrames * sampleBytes + 64);
+  channel.hash = newHash();
+  channel.overview = allocate((<usize>columns) << 3);
   channel.firstSound = -1;
   channel.lastSound = -1;
-  channel.overFullScale = newPlaces();
-  channel.notANumber = newPlaces();
+  channel.floorHistogram = allocate((<usize>floorBins) << 2);
+  channel.startEdgeRamps = true;
+  channel.upper = newSide(1);
+  channel.lower = newSide(-1);
+  channel.cycles = newCycles();
+  channel.pendingEnd = -1;
+  channel.dropouts = newPlaces();
+  channel.overFullScale = newOutliers();
+  channel.notANumber = newOutliers();
   return channel;
 }

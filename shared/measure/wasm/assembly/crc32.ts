@@ -113,9 +113,9 @@ export function finishCrc(): u32 {
   for (let i = words - 1; i >= 0; i--) {
     const at = first + ((<usize>i) << 4);
     let word = v128.load(at);
-    if (at - tap1 >= first) word = v128.xor(word, v128.load(at - tap1));
-    if (at - tap2 >= first) word = v128.xor(word, v128.load(at - tap2));
-    if (at - tap3 >= first) word = v128.xor(word, v128.load(at - tap3));
+    if (at >= first + tap1) word = v128.xor(word, v128.load(at - tap1));
+    if (at >= first + tap2) word = v128.xor(word, v128.load(at - tap2));
+    if (at >= first + tap3) word = v128.xor(word, v128.load(at - tap3));
     v128.store(at, word);
   }
   const folded = divide(0, first, (<usize>words) << 4);

@@ -1,4 +1,4 @@
-import { granuleFrames, granulesPerBlock } from './channel';
+import { granuleFrames, granulesPerBlock } from './block';
 
 /**
  * The quick pass: per granule of 64 frames lowest and highest sample, sum, sum of squares and

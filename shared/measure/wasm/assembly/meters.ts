@@ -1,78 +1,81 @@
 import { allocate, resetArena } from './arena';
 import { offsetBytes, slackBytes, swapBytes, takeEveryNth, takeSide } from './canonical-bytes';
-import { blockFrames, Channel, historyFrames, maxColumns, newChannel } from './channel';
+import { blockFrames, historyFrames } from './block';
+import { Channel, newChannel } from './channel';
 import { finishCrc, resetCrc, updateCrc } from './crc32';
 import { decode, Kind } from './decode';
 import { finishChannel, measureChannel } from './measure-channel';
-import { openOverview, overviewColumns, overviewFramesPerColumn } from './overview';
+import { sumProducts } from './pairs';
+import {
+  bigEndian,
+  channels,
+  dataBytes,
+  dataOffset,
+  measured,
+  placeParameters,
+  readParameters,
+  sampleBytes,
+  sampleKind,
+  signedBytes,
+} from './parameters';
 import { openResults, put, resultList } from './results';
+import { finishHash, newHash, updateHash } from './xxh3';
 
 /**
- * The meters of one file: open, then reserve and accept until the file's last byte, then finish.
- * All state lives in this module, so it measures one file at a time.
+ * The meters of one file: start and write the parameters, open, then put bytes at the input and
+ * accept them until the file's last, then finish. All state lives in this module, so it measures
+ * one file at a time.
  */
 
 /** Room for one reading of the source besides an unfinished block. */
 const readingBytes: usize = 1 << 20;
 
-let kind: Kind = Kind.pcm16;
-let sampleBytes: usize = 0;
+/** More than one channel's results can be: five lists of places and some thirty numbers. */
+const mostResultsOfChannel: i32 = 4096;
+
+/** Bytes of a decoded sample. */
 let sampleSize: usize = 0;
-let channels: usize = 0;
-/** Channels that are measured: the first 64. */
-let measured: i32 = 0;
-let bigEndian: bool = false;
-let signedBytes: bool = false;
+let blockBytes: usize = 0;
+let channelList: usize = 0;
+/** Per pair of channels the sum of their products. */
+let products: usize = 0;
 
 let input: usize = 0;
 let inputRoom: usize = 0;
 let filled: usize = 0;
+/** A block turned into canonical byte order. */
 let scratch: usize = 0;
-let channelList: usize = 0;
 
 let bytesToSkip: f64 = 0;
 let bytesToMeasure: f64 = 0;
 let framesDone: f64 = 0;
 
-export function open(
-  sampleKind: i32,
-  bytesOfSample: i32,
-  isBigEndian: bool,
-  isSigned8: bool,
-  channelCount: i32,
-  measuredChannels: i32,
-  sampleRateHz: f64,
-  bits: i32,
-  frames: f64,
-  dataOffset: f64,
-  dataBytes: f64,
-): void {
+/** Forgets the file before; returns where the parameters of the next one go. */
+export function start(): usize {
   resetArena();
   resetCrc();
-  kind = <Kind>sampleKind;
-  sampleBytes = <usize>bytesOfSample;
-  sampleSize = kind == Kind.pcm32 || kind == Kind.float64 ? 8 : 4;
-  channels = <usize>channelCount;
-  measured = measuredChannels;
-  bigEndian = isBigEndian;
-  signedBytes = isSigned8;
+  return placeParameters();
+}
+
+export function open(): void {
+  readParameters();
+  const wide = sampleKind == Kind.pcm32 || sampleKind == Kind.float64;
+  sampleSize = wide ? 8 : 4;
+  blockBytes = <usize>blockFrames * sampleBytes * channels;
   bytesToSkip = dataOffset;
   bytesToMeasure = dataBytes;
   framesDone = 0;
   filled = 0;
-  const blockBytes = <usize>blockFrames * sampleBytes * channels;
   inputRoom = readingBytes + blockBytes;
   input = allocate(inputRoom + slackBytes);
   scratch = allocate(blockBytes + slackBytes);
   channelList = allocate((<usize>measured) << 2);
+  products = allocate((<usize>measured) << 2);
   for (let c = 0; c < measured; c++) {
-    store<usize>(
-      channelList + ((<usize>c) << 2),
-      changetype<usize>(newChannel(sampleSize, sampleBytes)),
-    );
+    const channel = newChannel(sampleSize);
+    store<usize>(channelList + ((<usize>c) << 2), changetype<usize>(channel));
   }
-  openOverview(frames, maxColumns);
-  openResults(64 + measured * 4096);
+  openResults(measured * mostResultsOfChannel);
 }
 
 function channelAt(index: i32): Channel {
@@ -93,14 +96,10 @@ export function inputSpace(): usize {
 export function accept(bytes: usize): void {
   updateCrc(input + filled, bytes);
   filled += bytes;
-  let from = input;
-  let left = filled;
-  const skipped = <usize>Math.min(bytesToSkip, <f64>left);
+  const skipped = <usize>Math.min(bytesToSkip, <f64>filled);
   bytesToSkip -= <f64>skipped;
-  from += skipped;
-  left -= skipped;
-
-  const blockBytes = <usize>blockFrames * sampleBytes * channels;
+  let from = input + skipped;
+  let left = filled - skipped;
   while (left >= blockBytes && bytesToMeasure >= <f64>blockBytes) {
     measureBlock(from, blockFrames);
     from += blockBytes;
@@ -108,48 +107,65 @@ export function accept(bytes: usize): void {
     bytesToMeasure -= <f64>blockBytes;
   }
   // Less than a block waits for more; what lies behind the sample data is of no interest.
-  filled = bytesToMeasure < <f64>blockBytes ? <usize>Math.min(<f64>left, bytesToMeasure) : left;
+  filled = <usize>Math.min(<f64>left, bytesToMeasure);
   memory.copy(input, from, filled);
 }
 
 /** Measures the last, shorter block and returns the address of the results. */
 export function finish(): usize {
   const frames = <i32>(filled / (sampleBytes * channels));
-  if (frames > 0) measureBlock(input, frames);
+  measureBlock(input, frames);
   put(framesDone);
   put(<f64>finishCrc());
-  put(<f64>overviewFramesPerColumn());
-  put(<f64>overviewColumns());
-  for (let c = 0; c < measured; c++) finishChannel(channelAt(c));
+  for (let c = 0; c < measured; c++) {
+    if (sampleSize == 4) finishChannel<f32>(channelAt(c), framesDone);
+    else finishChannel<f64>(channelAt(c), framesDone);
+  }
+  for (let pair = 0; pair < measured >> 1; pair++) put(load<f64>(products + ((<usize>pair) << 3)));
+  put(<f64>joinDigests());
   return resultList();
 }
 
 function measureBlock(bytes: usize, frames: i32): void {
   const count = <usize>frames;
-  const size = count * channels * sampleBytes;
-  let block = bytes;
-  if (bigEndian && sampleBytes > 1) {
-    swapBytes(bytes, scratch, size, sampleBytes);
-    block = scratch;
-  } else if (signedBytes) {
-    offsetBytes(bytes, scratch, size);
-    block = scratch;
-  }
+  const block = toCanonicalOrder(bytes, count * channels * sampleBytes);
   for (let c = 0; c < measured; c++) {
     const channel = channelAt(c);
-    let own = block;
-    if (channels > 1) {
-      own = channel.bytes;
-      const first = block + <usize>c * sampleBytes;
-      if (channels == 2) takeSide(first, own, count, sampleBytes);
-      else takeEveryNth(first, own, own + count * sampleBytes, sampleBytes, channels);
-    }
-    const clean = !decode(kind, own, channel.samples, count);
+    const own = channels == 1 ? block : takeChannel(channel, block, c, count);
+    if (frames == blockFrames) updateHash(channel.hash, own, count * sampleBytes);
+    else finishHash(channel.hash, own, count * sampleBytes);
+    if (frames == 0) continue;
+    const clean = !decode(<Kind>sampleKind, own, channel.samples, count);
     if (sampleSize == 4) measureChannel<f32>(channel, own, framesDone, frames, clean);
     else measureChannel<f64>(channel, own, framesDone, frames, clean);
   }
+  for (let pair = 0; pair < measured >> 1; pair++) addProducts(pair, frames);
   for (let c = 0; c < measured; c++) keepHistory(channelAt(c), frames);
   framesDone += <f64>frames;
+}
+
+function toCanonicalOrder(bytes: usize, size: usize): usize {
+  if (signedBytes) offsetBytes(bytes, scratch, size);
+  else if (bigEndian && sampleBytes > 1) swapBytes(bytes, scratch, size, sampleBytes);
+  else return bytes;
+  return scratch;
+}
+
+function takeChannel(channel: Channel, block: usize, index: i32, frames: usize): usize {
+  const from = block + <usize>index * sampleBytes;
+  const to = channel.bytes;
+  if (channels == 2) takeSide(from, to, frames, sampleBytes);
+  else takeEveryNth(from, to, to + frames * sampleBytes, sampleBytes, channels);
+  return to;
+}
+
+function addProducts(pair: i32, frames: i32): void {
+  const one = channelAt(2 * pair);
+  const other = channelAt(2 * pair + 1);
+  const at = products + ((<usize>pair) << 3);
+  const sum =
+    sampleSize == 4 ? sumProducts<f32>(one, other, frames) : sumProducts<f64>(one, other, frames);
+  store<f64>(at, load<f64>(at) + sum);
 }
 
 /** The last frames of this block come to lie in front of the next one. */
@@ -157,4 +173,16 @@ function keepHistory(channel: Channel, frames: i32): void {
   const history = <usize>historyFrames * sampleSize;
   const end = channel.samples + <usize>frames * sampleSize;
   memory.copy(channel.samples - history, end - history, history);
+}
+
+/** The identity of all channels: of one its own hash, of several the hash of their hashes. */
+function joinDigests(): usize {
+  if (measured == 1) return channelAt(0).hash.digest;
+  const joined = allocate((<usize>measured) << 4);
+  for (let c = 0; c < measured; c++) {
+    memory.copy(joined + ((<usize>c) << 4), channelAt(c).hash.digest, 16);
+  }
+  const hash = newHash();
+  finishHash(hash, joined, (<usize>measured) << 4);
+  return hash.digest;
 }

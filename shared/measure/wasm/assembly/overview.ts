@@ -1,31 +1,9 @@
-import { Channel, granuleFrames } from './channel';
+import { granuleFrames } from './block';
+import { Channel } from './channel';
 import { highest, lowest } from './levels';
+import { columns, framesPerColumn } from './parameters';
 
 /** The picture: lowest and highest sample of every column, kept as f32 pairs. */
-
-let framesPerColumn: i32 = 1;
-let columns: i32 = 0;
-
-/**
- * Columns are as short as 2,048 of them allow. Where they are longer than a granule they are a
- * whole number of granules, so that no granule belongs to two of them.
- */
-export function openOverview(frames: f64, maxColumns: i32): void {
-  let perColumn = Math.max(1, Math.ceil(frames / <f64>maxColumns));
-  if (perColumn > <f64>granuleFrames) {
-    perColumn = Math.ceil(perColumn / <f64>granuleFrames) * <f64>granuleFrames;
-  }
-  framesPerColumn = <i32>perColumn;
-  columns = <i32>Math.ceil(frames / perColumn);
-}
-
-export function overviewFramesPerColumn(): i32 {
-  return framesPerColumn;
-}
-
-export function overviewColumns(): i32 {
-  return columns;
-}
 
 export function drawGranules<T extends number>(channel: Channel, frames: i32): void {
   if (framesPerColumn < granuleFrames) {

@@ -1,5 +1,5 @@
 import { allocate } from './arena';
-import { Places } from './channel';
+import { Places } from './places';
 
 /**
  * Results leave the module as one list of f64, in the order in which they are put here and read

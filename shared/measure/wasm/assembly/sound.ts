@@ -1,9 +1,9 @@
-import { Channel, granuleFrames } from './channel';
+import { granuleFrames } from './block';
+import { Channel } from './channel';
 import { highest, lowest } from './levels';
+import { soundLevel } from './parameters';
 
 /** First and last sample above -60 dBFS. */
-
-export const soundThreshold: f64 = 0.001;
 
 export function findSound<T extends number>(channel: Channel, start: f64, frames: i32): void {
   const granules = (frames + granuleFrames - 1) / granuleFrames;
@@ -30,10 +30,10 @@ function sampleAt<T extends number>(channel: Channel, index: i32): f64 {
 }
 
 function isSound(sample: f64): bool {
-  return Math.abs(sample) > soundThreshold;
+  return Math.abs(sample) > soundLevel;
 }
 
 function sounds(granule: i32): bool {
   const at = (<usize>granule) << 3;
-  return load<f64>(highest + at) > soundThreshold || load<f64>(lowest + at) < -soundThreshold;
+  return load<f64>(highest + at) > soundLevel || load<f64>(lowest + at) < -soundLevel;
 }
