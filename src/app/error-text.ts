@@ -21,6 +21,7 @@ function textOf(details: Details, key: string): string | undefined {
 
 function waitWords(seconds: number | undefined): string {
   if (seconds === undefined) return 'Wait a while, then try again.';
+  if (seconds <= 5) return 'Try again in a moment.';
   if (seconds < 90) return `Try again in ${String(Math.ceil(seconds))} seconds.`;
   if (seconds < 5400) return `Try again in ${String(Math.ceil(seconds / 60))} minutes.`;
   return `Try again in ${String(Math.ceil(seconds / 3600))} hours.`;

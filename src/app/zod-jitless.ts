@@ -4,6 +4,5 @@
  * them); setting it here costs no kilobyte, while `z.config()` would pull zod into the first page.
  * Import this file first, in the page and in every worker that parses with zod.
  */
-(globalThis as { __zod_globalConfig?: { jitless?: boolean } }).__zod_globalConfig = {
-  jitless: true,
-};
+const shared = globalThis as { __zod_globalConfig?: { jitless?: boolean } };
+shared.__zod_globalConfig = Object.assign(shared.__zod_globalConfig ?? {}, { jitless: true });

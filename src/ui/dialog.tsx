@@ -1,5 +1,5 @@
 import { AlertDialog as AlertParts, Dialog as Parts } from 'radix-ui';
-import type { ReactNode } from 'react';
+import { useRef, type ReactNode } from 'react';
 import { Button, type ButtonKind } from './button.tsx';
 
 type DialogProps = {
@@ -18,6 +18,23 @@ const titleClass = 'text-heading font-semibold';
 const actionsClass =
   'flex flex-wrap justify-end gap-2 border-t border-line px-5 py-4 sm:px-6 max-sm:flex-col-reverse';
 
+/**
+ * Our dialogs are opened by state and not by a trigger of the library, which then would leave
+ * the focus nowhere: whatever had it at the opening gets it back.
+ */
+function useFocusReturn() {
+  const opener = useRef<Element | null>(null);
+  return {
+    onOpenAutoFocus: () => {
+      opener.current = document.activeElement;
+    },
+    onCloseAutoFocus: (event: Event) => {
+      event.preventDefault();
+      if (opener.current instanceof HTMLElement) opener.current.focus();
+    },
+  };
+}
+
 /** Something to do before going on. Escape, the cross and a press outside close it. */
 export function Dialog({
   open,
@@ -28,11 +45,13 @@ export function Dialog({
   wide = false,
   children,
 }: DialogProps) {
+  const focusReturn = useFocusReturn();
   return (
     <Parts.Root open={open} onOpenChange={onOpenChange}>
       <Parts.Portal>
         <Parts.Overlay className="overlay-veil" />
         <Parts.Content
+          {...focusReturn}
           className="overlay-card"
           data-wide={wide ? '' : undefined}
           {...(description === undefined ? { 'aria-describedby': undefined } : {})}
@@ -87,11 +106,12 @@ export function AlertDialog({
   busy = false,
   onConfirm,
 }: AlertDialogProps) {
+  const focusReturn = useFocusReturn();
   return (
     <AlertParts.Root open={open} onOpenChange={onOpenChange}>
       <AlertParts.Portal>
         <AlertParts.Overlay className="overlay-veil" />
-        <AlertParts.Content className="overlay-card">
+        <AlertParts.Content {...focusReturn} className="overlay-card">
           <div className="px-5 pt-5 pb-5 sm:px-6">
             <AlertParts.Title className={titleClass}>{title}</AlertParts.Title>
             <AlertParts.Description className="mt-2 text-ink-2">

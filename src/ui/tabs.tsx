@@ -34,7 +34,10 @@ export function Tabs<Value extends string>({ label, tabs, value, onChange }: Tab
           >
             {tab.label}
             {tab.count !== undefined && (
-              <span className="figures ml-2 text-small text-ink-2">{tab.count}</span>
+              <>
+                {' '}
+                <span className="figures ml-1 text-small text-ink-2">{tab.count}</span>
+              </>
             )}
           </Parts.Trigger>
         ))}
