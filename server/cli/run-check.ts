@@ -40,7 +40,11 @@ export async function runCheck(args: CheckArguments): Promise<number> {
     for (const { path, reason } of problems) {
       process.stderr.write(`${printable(path)} was not taken in: ${reason}.\n`);
     }
-    process.stdout.write(args.json ? writeReport(report) : reportTable(report));
+    process.stdout.write(
+      args.json
+        ? writeReport(report)
+        : reportTable(report, { repaired: args.repairSafe, savedTo: args.out }),
+    );
     return report.verdict === 'must-fix' ? mustFixLeft : nothingToFix;
   } catch (error) {
     progress.clear();

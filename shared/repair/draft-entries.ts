@@ -1,3 +1,4 @@
+import { apart } from '../findings/shared-line.ts';
 import type { Finding } from '../findings/finding.ts';
 import type { ChosenRepair, Operation } from './repair-plan.ts';
 import type { TrackFormat } from '../wave/track-format.ts';
@@ -50,7 +51,9 @@ export function draftEntries(
   chosen: readonly ChosenRepair[],
 ): Drafts {
   const repairs = chosen.flatMap((choice) =>
-    apart(findings).flatMap((finding) => (answers(choice, finding) ? [{ choice, finding }] : [])),
+    findings
+      .flatMap(apart)
+      .flatMap((finding) => (answers(choice, finding) ? [{ choice, finding }] : [])),
   );
   const leftOut = repairs
     .filter(({ choice }) => choice.repair === 'leave-out')
@@ -78,15 +81,6 @@ export function draftEntries(
 }
 
 type Repair = { choice: ChosenRepair; finding: Finding };
-
-/** A line that stands for many files, as the findings those files would have alone. */
-function apart(findings: readonly Finding[]): Finding[] {
-  return findings.flatMap((finding) =>
-    finding.perFile
-      ? finding.perFile.map(({ path, ...rest }) => ({ ...finding, ...rest, files: [path] }))
-      : [finding],
-  );
-}
 
 /** A choice names the files of one finding, or of many of the same code at once. */
 function answers(choice: ChosenRepair, finding: Finding): boolean {
