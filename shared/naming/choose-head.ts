@@ -28,7 +28,12 @@ export function instrumentMeanings(word: Word): InstrumentMeaning[] {
 
 const standingOrder = { sure: 0, misspelt: 1, unsure: 2 } as const;
 
-function hitOf(word: Word, index: number, hint: GroupNature | null): Hit | null {
+function hitOf(words: readonly Word[], index: number, hint: GroupNature | null): Hit | null {
+  const word = words[index];
+  if (!word) return null;
+  // One letter names an instrument only with its number: T1, T2.
+  const letter = word.to - word.from === 1;
+  if (letter && (words.length > 2 || words[index + 1]?.digits == null)) return null;
   const [best] = instrumentMeanings(word).sort((a, b) => {
     const hinted = Number(b.instrument.nature === hint) - Number(a.instrument.nature === hint);
     const standing = standingOrder[a.standing] - standingOrder[b.standing];
@@ -62,7 +67,7 @@ function last<T>(items: readonly T[]): T | undefined {
  * only a guess: the more particular one, else the last, where English puts the main word.
  */
 export function chooseHead(words: readonly Word[], hint: GroupNature | null): Head | null {
-  const hits = words.flatMap((word, index) => hitOf(word, index, hint) ?? []);
+  const hits = words.flatMap((_, index) => hitOf(words, index, hint) ?? []);
   if (hits.length === 0) return null;
   const { hits: candidates, sure } = plainest(hits);
   const particular = candidates.filter((hit) => !hit.instrument.general);

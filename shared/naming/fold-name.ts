@@ -12,6 +12,12 @@ const plainLetters: Readonly<Record<string, string>> = {
   ı: 'i',
 };
 
+/** Whether a text has only characters that Unicode forms and accents cannot change. */
+export function isAscii(text: string): boolean {
+  for (let i = 0; i < text.length; i++) if (text.charCodeAt(i) > 127) return false;
+  return true;
+}
+
 const marks = /\p{M}/gu;
 
 /**
@@ -29,8 +35,20 @@ export function foldCharacter(character: string): string {
   return folded;
 }
 
+/** One character in plain ASCII letters with its case kept; '' where there is none for it. */
+export function plainLetter(character: string): string {
+  const code = character.charCodeAt(0);
+  if (character.length === 1 && code < 128) return character;
+  const folded = foldCharacter(character);
+  const plain = folded.replace(/[^ -~]/g, '');
+  const isUpper = character !== character.toLowerCase();
+  if (!isUpper) return plain;
+  return plain.charAt(0).toUpperCase() + plain.slice(1);
+}
+
 /** A text as it is compared: see foldCharacter. */
 export function foldName(text: string): string {
+  if (isAscii(text)) return text.toLowerCase();
   let folded = '';
   for (const character of text) folded += foldCharacter(character);
   return folded;
@@ -41,5 +59,6 @@ export function foldName(text: string): string {
  * case folding as far as ECMAScript has it (upper, then lower, so that ß equals SS).
  */
 export function clashKey(name: string): string {
+  if (isAscii(name)) return name.toLowerCase();
   return name.normalize('NFC').toUpperCase().toLowerCase().normalize('NFC');
 }

@@ -42,6 +42,9 @@ export type Form = {
   /** Offsets in `letters` at which a new word begins. */
   breaks: readonly number[];
   meanings: Meaning[];
+  /** Whether it surely means something, and whether it can be a side. */
+  sure: boolean;
+  side: boolean;
 };
 
 export type TrieNode = { next: Map<number, TrieNode>; forms: Form[] };
@@ -107,9 +110,11 @@ export function addForm(root: TrieNode, words: readonly string[], meaning: Meani
   const breaks: number[] = [];
   let offset = 0;
   for (const word of words.slice(0, -1)) breaks.push((offset += word.length));
-  const same = node.forms.find((form) => form.breaks.join() === breaks.join());
-  if (same) merge(same, meaning);
-  else node.forms.push({ letters, breaks, meanings: [meaning] });
+  let form = node.forms.find((known) => known.breaks.join() === breaks.join());
+  if (form) merge(form, meaning);
+  else node.forms.push((form = { letters, breaks, meanings: [meaning], sure: false, side: false }));
+  if (meaning.kind !== 'instrument' || meaning.standing === 'sure') form.sure = true;
+  if (meaning.kind === 'side') form.side = true;
 }
 
 function addInstrument(root: TrieNode, entry: InstrumentEntry, instrument: Instrument): void {

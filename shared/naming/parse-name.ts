@@ -6,21 +6,13 @@ import type { NameSpan, ParsedName } from './parsed-name.ts';
 import { readFolder, type FolderHint } from './read-folder.ts';
 import { readWords, type Word } from './read-words.ts';
 import { resolveWords, type NameFrame } from './resolve-words.ts';
-import { bareName, type Range } from './split-name.ts';
+import { bareName, nameRuns, type Range } from './split-name.ts';
 import { followsOrder } from './token-order.ts';
 
 /** What is known of the song; its words in a name say nothing about the part. */
 export type SongWords = { artist: string | null; title: string | null };
 
 const nothingKnown: SongWords = { artist: null, title: null };
-
-/** Pieces between two separators, for group letters and labels that stand as words of their own. */
-function standingWords(name: string): Range[] {
-  return [...name.matchAll(/[\p{L}\p{N}\p{M}]+/gu)].map((match) => ({
-    start: match.index,
-    end: match.index + match[0].length,
-  }));
-}
 
 function groupWords(naming: NamingRules, group: InstrumentGroup): string[] {
   const text = naming.groupStyle === 'letter' ? group.letter : group.label;
@@ -33,8 +25,8 @@ type GroupCandidate = { group: InstrumentGroup; range: Range };
 
 /** Where a group of the table could be written, by its letter or its label. */
 export function groupCandidates(name: string, naming: NamingRules): GroupCandidate[] {
-  const pieces = standingWords(name);
-  const folded = pieces.map((piece) => foldName(name.slice(piece.start, piece.end)));
+  const pieces = nameRuns(name).filter((run) => run.isWord);
+  const folded = pieces.map((piece) => foldName(piece.text));
   const candidates: GroupCandidate[] = [];
   for (const group of naming.groups) {
     const words = groupWords(naming, group);

@@ -40,12 +40,10 @@ function priceOf(text: NameText, form: Form, at: number): number | null {
   const length = form.letters.length;
   const startsGlued = text.boundary[at] === glued;
   const endsGlued = text.boundary[at + length] === glued;
-  let price: number = form.meanings.some((m) => m.kind !== 'instrument' || m.standing === 'sure')
-    ? cost.form
-    : cost.unsureForm;
+  let price: number = form.sure ? cost.form : cost.unsureForm;
   if (length === 1) {
     if (endsGlued) return null;
-    if (startsGlued && !form.meanings.some((m) => m.kind === 'side')) return null;
+    if (startsGlued && !form.side) return null;
     price += cost.singleLetter;
   }
   if (startsGlued) price += cost.gluedCut;

@@ -174,9 +174,11 @@ class NameReader {
   }
 
   private isCounter(word: Word, before: Word | undefined, index: number): boolean {
-    if (!before || word.end - word.start < 2 || !this.endsName(index)) return false;
+    if (!before || !this.endsName(index)) return false;
     const between = this.context.name.slice(before.end, word.start);
-    return /^[-_.]+$/.test(between);
+    const padded = word.text.startsWith('0');
+    if (between === this.context.naming.separator && !padded) return false;
+    return /^\.+$/.test(between) || (/^[-_]+$/.test(between) && word.end - word.start >= 2);
   }
 
   private readOrdinal(word: Word, value: number): void {
@@ -237,8 +239,10 @@ class NameReader {
   private readSide(word: Word, side: Side, index: number): boolean {
     if (this.parsed.side !== null) return false;
     const short = word.to - word.from <= 2;
-    const something = this.last !== 'nothing';
-    const late = something && this.endsName(index);
+    const { tokens } = this.context.naming;
+    const anywhere = tokens.includes('side') && tokens.at(-1) !== 'side';
+    const something = this.last !== 'nothing' || anywhere;
+    const late = anywhere || (something && this.endsName(index));
     if (lateSides.has(side)) {
       if (!late) return false;
       if (short && side !== 'stereo') this.guessed = true;

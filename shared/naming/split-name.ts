@@ -1,4 +1,4 @@
-import { foldCharacter } from './fold-name.ts';
+import { foldCharacter, isAscii } from './fold-name.ts';
 
 /** How two neighbouring letters stand to each other. */
 export const glued = 0;
@@ -31,6 +31,42 @@ export function bareName(path: string): string {
   return bare === '' ? segment : bare;
 }
 
+const wordCharacter = /\p{L}|\p{N}|\p{M}|['’]|\u200c|\u200d/u;
+
+/** Character classes of ASCII, looked up rather than matched: names are read by the thousand. */
+const asciiClasses: readonly (CharacterClass | null)[] = Array.from({ length: 128 }, (_, code) => {
+  if (code >= 48 && code <= 57) return 'digit';
+  if (code >= 65 && code <= 90) return 'upper';
+  return code >= 97 && code <= 122 ? 'lower' : null;
+});
+
+function isWordCharacter(character: string): boolean {
+  const code = character.charCodeAt(0);
+  return code < 128 ? asciiClasses[code] != null || code === 39 : wordCharacter.test(character);
+}
+
+/** A stretch of a name: letters and digits, or what stands between two such stretches. */
+export type NameRun = Range & { text: string; isWord: boolean };
+
+/** Cuts a name where words begin and end: `Kick_In` -> `Kick`, `_`, `In`. */
+export function nameRuns(name: string): NameRun[] {
+  const runs: NameRun[] = [];
+  let start = 0;
+  for (const text of name) {
+    const end = start + text.length;
+    const isWord = isWordCharacter(text);
+    const run = runs.at(-1);
+    if (run?.isWord === isWord) {
+      run.text += text;
+      run.end = end;
+    } else {
+      runs.push({ text, start, end, isWord });
+    }
+    start = end;
+  }
+  return runs;
+}
+
 const letterOrDigit = /[\p{L}\p{N}]/u;
 const upperCase = /\p{Lu}/u;
 const digit = /\p{Nd}/u;
@@ -38,7 +74,11 @@ const lowerCase = /\p{Ll}/u;
 
 type CharacterClass = 'upper' | 'lower' | 'digit' | 'other';
 
-function classOf(character: string): CharacterClass {
+/** null: neither letter nor digit. */
+function classOf(character: string): CharacterClass | null {
+  const code = character.charCodeAt(0);
+  if (code < 128) return asciiClasses[code] ?? null;
+  if (!letterOrDigit.test(character)) return null;
   if (digit.test(character)) return 'digit';
   if (upperCase.test(character)) return 'upper';
   if (lowerCase.test(character)) return 'lower';
@@ -56,20 +96,26 @@ function isSoft(before: CharacterClass, here: CharacterClass, after: CharacterCl
 
 type SourceCharacter = { text: string; start: number; end: number; kind: CharacterClass };
 
+function isMark(character: string): boolean {
+  return character.charCodeAt(0) > 127 && /\p{M}/u.test(character);
+}
+
 function readCharacters(name: string, masks: readonly Range[]): (SourceCharacter | null)[] {
   const characters: (SourceCharacter | null)[] = [];
   let start = 0;
   for (const text of name) {
     const end = start + text.length;
-    const masked = masks.some((mask) => start >= mask.start && start < mask.end);
-    if (masked || !(letterOrDigit.test(text) || /\p{M}/u.test(text))) {
-      // An apostrophe is part of its word: mic'd.
-      if (masked || (text !== "'" && text !== '’')) characters.push(null);
-    } else if (letterOrDigit.test(text)) {
-      characters.push({ text, start, end, kind: classOf(text) });
-    } else {
+    const at = start;
+    const masked = masks.some((mask) => at >= mask.start && at < mask.end);
+    const kind = masked ? null : classOf(text);
+    if (kind !== null) {
+      characters.push({ text, start, end, kind });
+    } else if (!masked && isMark(text)) {
       const last = characters.at(-1);
       if (last) last.end = end;
+    } else if (masked || (text !== "'" && text !== '’')) {
+      // An apostrophe is part of its word: mic'd.
+      characters.push(null);
     }
     start = end;
   }
@@ -86,7 +132,8 @@ export function splitName(name: string, masks: readonly Range[] = []): NameText 
       before = null;
       return;
     }
-    const folded = foldCharacter(character.text).replace(/[^\p{L}\p{N}]/gu, '');
+    let folded = foldCharacter(character.text);
+    if (!isAscii(character.text)) folded = folded.replace(/[^\p{L}\p{N}]/gu, '');
     for (let i = 0; i < folded.length; i++) {
       const following = characters[index + 1]?.kind ?? 'other';
       if (i > 0) text.boundary.push(glued);

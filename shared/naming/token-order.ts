@@ -36,19 +36,25 @@ export function tokenOf(span: NameSpan, tokens: readonly NameToken[]): NameToken
   }
 }
 
-/** The first piece that stands before another which the convention puts first; null: all in order. */
+type Placed = { span: NameSpan; token: NameToken };
+
+/**
+ * The first piece that stands in the wrong place; null: all in order. Of two that stand the wrong
+ * way round it is the one that is not the instrument, for the instrument is what people look for.
+ */
 export function firstOutOfOrder(
   spans: readonly NameSpan[],
   tokens: readonly NameToken[],
-): { span: NameSpan; token: NameToken } | null {
-  let reached = -1;
+): Placed | null {
+  let furthest: Placed | null = null;
   for (const span of spans) {
     const token = tokenOf(span, tokens);
-    if (token === null) continue;
-    const place = tokens.indexOf(token);
-    if (place < 0) continue;
-    if (place < reached) return { span, token };
-    reached = place;
+    if (token === null || !tokens.includes(token)) continue;
+    const placed = { span, token };
+    if (furthest && tokens.indexOf(token) < tokens.indexOf(furthest.token)) {
+      return token === 'instrument' ? furthest : placed;
+    }
+    furthest = placed;
   }
   return null;
 }

@@ -69,7 +69,7 @@ export const details: readonly DetailEntry[] = [
   { written: 'Pedal', short: 'Ped', forms: 'pedal, ped, foot' },
   { written: 'Bell', short: 'Bell', forms: 'bell, bells' },
   { written: 'Edge', short: 'Edge', forms: 'edge, edges' },
-  { written: 'Beater', short: 'Beat', forms: 'beater, beat, beater side, batter' },
+  { written: 'Beater', short: 'Btr', forms: 'beater, beater side, batter' },
   { written: 'Click', short: 'Clik', forms: 'click, clik' },
   { written: 'Knee', short: 'Knee', forms: 'knee, crotch' },
   { written: 'Shell', short: 'Shel', forms: 'shell, shel' },
@@ -116,7 +116,7 @@ export const details: readonly DetailEntry[] = [
   { written: 'Break', short: 'Brk', forms: 'break, brk, breaks' },
   { written: 'Drop', short: 'Drop', forms: 'drop, drops' },
   { written: 'Interlude', short: 'Itld', forms: 'interlude, itld, zwischenspiel, interludio' },
-  { written: 'Outro', short: 'Out', forms: 'outro, outros, coda' },
+  { written: 'Outro', short: 'Otro', forms: 'outro, outros, coda' },
   { written: 'End', short: 'End', forms: 'end, ending, ende' },
   {
     written: 'In',
@@ -138,7 +138,7 @@ export const details: readonly DetailEntry[] = [
   },
   { written: 'Front', short: 'Frnt', forms: 'front, frnt, vorne' },
   { written: 'Back', short: 'Back', forms: 'back, rear, hinten' },
-  { written: 'Close', short: 'Cls', forms: 'close, near, nah, cerca, clos' },
+  { written: 'Close', short: 'Clse', forms: 'close, near, nah, cerca, clos' },
   { written: 'Far', short: 'Far', forms: 'far, distant, fern, lejos, outer room' },
   { written: 'Wide', short: 'Wide', forms: 'wide, wd, wider' },
   { written: 'Room', short: 'Rm', forms: 'room, rm, rms, raum, sala, ambiente, rooms' },
@@ -220,7 +220,7 @@ export const details: readonly DetailEntry[] = [
   },
   {
     written: 'Crush',
-    short: 'Crsh',
+    short: 'Crus',
     forms: 'crush, crushed, smash, smashed, squash, squashed, smsh, crsh',
   },
   {

@@ -5,10 +5,10 @@ export const drums: readonly InstrumentEntry[] = [
     written: 'Kick',
     short: 'BD',
     forms: `kick, kick drum, bass drum, bd, kd, kick d, grosse caisse, (grosse|bass|fuss) trommel,
-      cassa, gran cassa, sub kick +Sub, sub bd +Sub, (k|kick|bd) (i|in) +In, (k|kick|bd) (o|out) +Out,
+      cassa, gran cassa, sub kick +Sub, sub bd +Sub, (kick|bd) i +In, (kick|bd) o +Out,
+      k (i|in) +In, k (o|out) +Out,
       k sub +Sub`,
-    misspelt:
-      'kik, kck, kic, kikc, kicj, kick drm, b drum, bs drum, kik (i|in) +In, kik (o|out) +Out',
+    misspelt: 'kik, kck, kic, kikc, kicj, kick drm, b drum, bs drum, kik i +In, kik o +Out',
     unsure: 'bombo, ki +In, ko +Out',
   },
   {
@@ -44,7 +44,7 @@ export const drums: readonly InstrumentEntry[] = [
     short: 'Tom',
     forms: 'tom, tom tom, rack tom, tom rack, rack, haenge tom, hanger tom, mid tom +Mid',
     misspelt: 'tohm, rck tom, racktm',
-    unsure: 'rk, rt, tm',
+    unsure: 'rk, rt, tm, t',
   },
   {
     written: 'Floor Tom',
