@@ -25,6 +25,9 @@ export default defineConfig({
           environment: 'node',
           include: ['tests/server/**/*.test.ts'],
           globalSetup: ['tests/support/test-databases.ts'],
+          // PostgreSQL and password hashes take their time where two cores do everything.
+          testTimeout: 30_000,
+          hookTimeout: 60_000,
         },
       },
     ],
