@@ -1,5 +1,5 @@
 import { safeRepairKinds, type RepairKind } from '../findings/finding.ts';
-import { fileNameOf } from '../pack/safe-names.ts';
+import { fileNameOf, splitExtension } from '../pack/safe-names.ts';
 import type { Operation, PlannedEntry, RepairPlan } from '../repair/repair-plan.ts';
 import type { MeasuredFile } from '../session/measured-file.ts';
 
@@ -11,9 +11,7 @@ export function describeRepairs(
 ): RepairKind[] {
   const repairs: RepairKind[] = [];
   const [first] = entry.from;
-  if (entry.from.length === 1 && first && fileNameOf(first) !== fileNameOf(entry.to)) {
-    repairs.push('rename');
-  }
+  if (entry.from.length === 1 && first && isRenamed(first, entry)) repairs.push('rename');
   const reading = files.find(({ path }) => path === first)?.reading;
   if (entry.rewriteAsWav && reading?.kind === 'track' && isAiff(reading.format.container)) {
     repairs.push('rewrite-container');
@@ -24,6 +22,13 @@ export function describeRepairs(
     if (!repairs.includes(repair)) repairs.push(repair);
   }
   return repairs;
+}
+
+/** Another ending alone comes with being rewritten. */
+function isRenamed(path: string, { to, rewriteAsWav }: PlannedEntry): boolean {
+  const was = fileNameOf(path);
+  const is = fileNameOf(to);
+  return rewriteAsWav ? splitExtension(was).base !== splitExtension(is).base : was !== is;
 }
 
 const isAiff = (container: string): boolean => container === 'aiff' || container === 'aifc';

@@ -1,4 +1,5 @@
 import type { PDFDocument, PDFFont } from 'pdf-lib';
+import { unwrapWoff } from './unwrap-woff.ts';
 
 /** Cuts of the typefaces the sheet is set in. */
 export const sheetFaces = ['sans-400', 'sans-600', 'mono-400'] as const;
@@ -55,7 +56,7 @@ export async function embedSheetFonts(
     const subsets = new Map<FontSubset, PDFFont>();
     for (const subset of neededSubsets(characters)) {
       const bytes = await load(face, subset);
-      if (bytes) subsets.set(subset, await document.embedFont(bytes, { subset: true }));
+      if (bytes) subsets.set(subset, await document.embedFont(unwrapWoff(bytes), { subset: true }));
     }
     fonts.set(face, subsets);
   }
