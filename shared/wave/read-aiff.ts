@@ -65,7 +65,8 @@ export function readExtended80(bytes: Uint8Array): number | null {
   if ((exponent & 0x7fff) === 0x7fff) return null;
   const mantissa = view.getUint32(2) * 2 ** 32 + view.getUint32(6);
   const value = mantissa * 2 ** ((exponent & 0x7fff) - 16383 - 63);
-  return Math.round(exponent & 0x8000 ? -value : value);
+  // A mantissa of zero under a huge exponent is no number either.
+  return Number.isFinite(value) ? Math.round(exponent & 0x8000 ? -value : value) : null;
 }
 
 /** What a COMM chunk says; `at` of an impossible one counts from the start of its contents. */

@@ -39,7 +39,10 @@ function isStreamedSize(declaredBytes: number, available: number): boolean {
   return nearHalf || nearFull;
 }
 
-/** Reads a RIFF, RF64 or BW64 file whose first twelve bytes were recognised. */
+/**
+ * Reads a RIFF, RF64 or BW64 file whose first twelve bytes were recognised. Writers that know no
+ * RF64 let the 32 bits of the data size run over beyond 4 GiB: they still tell the rest.
+ */
 export async function readRiff(
   reader: BoundedReader,
   container: 'wav' | 'rf64' | 'bw64',
@@ -65,6 +68,8 @@ export async function readRiff(
     ) {
       return available;
     }
+    const ranOver = container === 'wav' ? Math.floor((available - bytes) / 2 ** 32) : 0;
+    if (ranOver > 0) return bytes + ranOver * 2 ** 32;
     promised ??= bytes;
     return bytes;
   });
