@@ -111,6 +111,8 @@ const argumentSchema = z.union([
   z.null(),
   z.array(z.number()).max(500),
   z.array(z.string()).max(500),
+  /** Things with a few words each, such as what is wrong with a name. */
+  z.array(z.record(z.string(), z.union([z.string(), z.number()]))).max(50),
 ]);
 
 const argumentsSchema = z.record(z.string(), argumentSchema);

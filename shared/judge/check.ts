@@ -41,6 +41,10 @@ export type CheckedSession = {
   /** Measured files with the role of a track, a click or a guide. */
   tracks: readonly CheckedTrack[];
   format: SessionFormat;
+  /** The set looks like clips that each begin where they begin in the song. */
+  looseClips: boolean;
+  /** Sound runs through the borders of many tracks: a live set cut into songs. */
+  cutFromLongerRecording: boolean;
   comparison: Comparison;
 };
 

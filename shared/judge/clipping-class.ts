@@ -3,12 +3,31 @@ import type { FileName } from './file-names.ts';
 /** How likely clipping belongs to the sound of a part. */
 export type ClippingClass = 'never-wanted' | 'often-wanted' | 'unknown';
 
+/** Strings that a microphone picks up without an amp, whatever group they are listed in. */
+const acoustic: ReadonlySet<string> = new Set([
+  'Acoustic Guitar',
+  'Nylon Guitar',
+  'Resonator Guitar',
+  'Banjo',
+  'Mandolin',
+  'Ukulele',
+  'Bouzouki',
+  'Oud',
+  'Sitar',
+  'Double Bass',
+]);
+
+/** States of a part that are distorted by what they are. */
+const distorted: ReadonlySet<string> = new Set(['Amp', 'Crunch', 'Distorted', 'Fuzz', 'Crush']);
+
 /**
  * Voices, acoustic instruments, keys and clean signals are never better for it; drums, amps,
- * synthesisers and effects often are (common practice, no source).
+ * synthesisers, effects and whatever is called distorted often are (common practice, no source).
  */
-export function clippingClass({ nature, isAcoustic, isDi }: FileName): ClippingClass {
-  if (isDi || isAcoustic) return 'never-wanted';
+export function clippingClass({ nature, instrument, detail }: FileName): ClippingClass {
+  if (detail.some((word) => distorted.has(word))) return 'often-wanted';
+  if (detail.includes('DI')) return 'never-wanted';
+  if (instrument !== null && acoustic.has(instrument)) return 'never-wanted';
   switch (nature) {
     case 'vocals':
     case 'orchestra':
@@ -24,4 +43,8 @@ export function clippingClass({ nature, isAcoustic, isDi }: FileName): ClippingC
     case null:
       return 'unknown';
   }
+}
+
+export function isAcoustic({ instrument }: Pick<FileName, 'instrument'>): boolean {
+  return instrument !== null && acoustic.has(instrument);
 }

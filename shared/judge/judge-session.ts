@@ -1,12 +1,22 @@
 import { sessionFormat, framesAtRate } from '../compare/session-format.ts';
-import { startEvidence } from '../compare/starts.ts';
+import { looksLikeLooseClips, startEvidence } from '../compare/starts.ts';
 import { findingDefinitions } from '../findings/catalogue/definitions.ts';
 import type { Finding, Level } from '../findings/finding.ts';
 import type { HouseRules } from '../rules/house-rules.ts';
 import type { FileRole, SessionInformation } from '../session/session-information.ts';
 import { answerBook, type AnswerBook } from './answers.ts';
+import { belongsToSession } from './belongs-to-session.ts';
+import { isCutFromLongerRecording } from './borders.ts';
 import type { CheckedFile, CheckedSession, CheckedTrack, Found } from './check.ts';
-import { fileChecks, formatChecks, readingChecks, sessionChecks, signalChecks } from './checks.ts';
+import {
+  companionChecks,
+  fileChecks,
+  formatChecks,
+  nameChecks,
+  readingChecks,
+  sessionChecks,
+  signalChecks,
+} from './checks.ts';
 import { nameFiles } from './file-names.ts';
 import type { JudgedSession } from './judged-session.ts';
 import { levelUnderRules } from './levels.ts';
@@ -77,7 +87,7 @@ export function judgeSession(
     files: checked.files.map(({ path, role, name }, index) => ({
       path,
       role,
-      group: name.group,
+      group: name.groupId,
       proposedName: name.proposedName,
       findings: inCodeOrder(byFile[index] ?? []),
     })),
@@ -106,9 +116,14 @@ function checkFile(
     found.push(...readingChecks.map((check) => check(measured)));
   }
   if (track) {
-    found.push(...formatChecks.map((check) => check(track, session)));
-    if (track.role !== 'click') found.push(...signalChecks.map((check) => check(track, session)));
+    const checks = [
+      ...formatChecks,
+      ...(track.role === 'click' ? [] : signalChecks),
+      ...companionChecks,
+    ];
+    found.push(...checks.map((check) => check(track, session)));
   }
+  if (belongsToSession(file)) found.push(...nameChecks.map((check) => check(file, session)));
   return found.filter((finding) => finding !== null);
 }
 
@@ -118,7 +133,7 @@ function toFinding(
   { rules }: CheckedSession,
   answerTo: AnswerBook,
 ): Finding[] {
-  const level = levelUnderRules(found.code, found.level, file?.name.group ?? null, rules);
+  const level = levelUnderRules(found.code, found.level, file?.name.groupId ?? null, rules);
   if (level === null) return [];
   const definition = findingDefinitions[found.code];
   const files = file ? [file.path] : (found.files ?? []);
@@ -129,7 +144,8 @@ function toFinding(
       code: found.code,
       level,
       files,
-      channel: found.channel ?? null,
+      // Of a mono file there is no other channel it could be about.
+      channel: file?.format?.channels === 1 ? null : (found.channel ?? null),
       places: found.places ?? 0,
       ranges: found.ranges ?? [],
       args: found.args,
@@ -140,29 +156,24 @@ function toFinding(
   ];
 }
 
-/** Audio that should be part of the set, whether it could be measured or not. */
-function belongsToSession({ role, reading }: CheckedFile): boolean {
-  return (role === 'track' || role === 'click' || role === 'guide') && reading.kind !== 'not-audio';
-}
-
 function prepareSession(
   session: JudgedSession,
   rules: HouseRules,
   information: SessionInformation,
 ): CheckedSession {
   const named = nameFiles(
-    session.files.map((file) => file.path),
+    session.files.map(({ path, format }) => ({ path, channels: format?.channels ?? null })),
     rules.names,
     information,
   );
   const files = session.files.map((file, index): CheckedFile => {
-    const { name, role } = named[index] ?? never(file.path);
+    const name = named[index] ?? never(file.path);
     return {
       path: file.path,
       reading: file.reading,
       format: file.format,
       measures: file.measures,
-      role: file.reading.kind === 'not-audio' && role !== 'leave-out' ? 'note' : role,
+      role: file.reading.kind === 'not-audio' && name.role !== 'leave-out' ? 'note' : name.role,
       name,
     };
   });
@@ -194,6 +205,8 @@ function prepareSession(
       start: starts[index] ?? never(track.path),
     })),
     format,
+    looseClips: looksLikeLooseClips(measured, format),
+    cutFromLongerRecording: isCutFromLongerRecording(measured, rules.signal),
     comparison: session.comparison,
   };
 }

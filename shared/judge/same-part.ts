@@ -1,9 +1,22 @@
-import type { CheckedTrack } from './check.ts';
+import type { FileName } from './file-names.ts';
 
 /**
  * Two files of one instrument: sides of a pair, microphones, clean beside amp, a parallel copy.
  * What happens in both of them at the same time is one event, not two.
  */
-export function samePart(a: CheckedTrack, b: CheckedTrack): boolean {
-  return a.name.instrument !== null && a.name.instrument === b.name.instrument;
+export function sameInstrument(a: FileName, b: FileName): boolean {
+  return a.instrument !== null && a.instrument === b.instrument;
+}
+
+/** Details that say which version of a part a file is, not which part. */
+const versionDetails: ReadonlySet<string> = new Set(['Comp', 'Alt']);
+
+/**
+ * Equal for files that are called the same but for takes, counters and leftovers; null where the
+ * part is not known.
+ */
+export function partKey({ instrument, ordinal, detail, side }: FileName): string | null {
+  if (instrument === null) return null;
+  const details = detail.filter((word) => !versionDetails.has(word));
+  return JSON.stringify([instrument, ordinal, [...details].sort(), side]);
 }

@@ -1,4 +1,6 @@
 import { z } from 'zod';
+import { nameFailureReasons } from '../../naming/explain-name.ts';
+import { nameTokens } from '../../rules/naming-rules.ts';
 import { define } from './definition.ts';
 
 /** Findings about how files are called. Names are given without folder and extension. */
@@ -6,8 +8,18 @@ export const names = {
   'name-breaks-rule': define({
     arguments: z.strictObject({
       name: z.string(),
-      /** Which parts of the convention fail, as the naming explains them; at least one. */
-      faults: z.array(z.string()).min(1),
+      /** Which parts of the convention fail, and how. */
+      faults: z
+        .array(
+          z.strictObject({
+            token: z.enum([...nameTokens, 'name']),
+            reason: z.enum(nameFailureReasons),
+            /** As it stands in the name, and as it should; empty where there is nothing to say. */
+            found: z.string(),
+            expected: z.string(),
+          }),
+        )
+        .min(1),
       /** null where no proper name can be worked out. */
       proposedName: z.string().nullable(),
     }),
@@ -21,7 +33,8 @@ export const names = {
     level: 'look',
     nextStep: 'decide',
     rule: 'names.groups',
-    repairs: ['rename'],
+    // Only a person can say what it is.
+    repairs: [],
   }),
   'number-repeated': define({
     arguments: z.strictObject({ number: z.number().int().nonnegative() }),
@@ -51,8 +64,12 @@ export const names = {
   'name-characters': define({
     arguments: z.strictObject({
       name: z.string(),
-      /** The characters that may not be there; control characters as `U+0007`. */
-      characters: z.array(z.string()).min(1),
+      /** The characters that may not be there; what cannot be seen as `U+0007`. */
+      characters: z.array(z.string()),
+      /** What may not stand at an end of the name. */
+      ends: z.array(
+        z.enum(['dot-at-end', 'space-at-end', 'space-at-start', 'hyphen-at-start', 'dot-at-start']),
+      ),
     }),
     level: 'look',
     nextStep: 'decide',

@@ -1,7 +1,7 @@
 import { joinPlaces } from '../../findings/finding-places.ts';
 import type { FindingRange } from '../../findings/finding.ts';
 import { found, type CheckedSession, type CheckedTrack, type TrackCheck } from '../check.ts';
-import { samePart } from '../same-part.ts';
+import { sameInstrument } from '../same-part.ts';
 import { onlyChannel } from '../track-measures.ts';
 
 /**
@@ -15,7 +15,7 @@ export const dropout: TrackCheck = (track, session) => {
   const shared = new Set<FindingRange>();
   const sharedWith: string[] = [];
   for (const other of session.tracks) {
-    if (other.path === track.path || samePart(other, track)) continue;
+    if (other.path === track.path || sameInstrument(other.name, track.name)) continue;
     const together = atTheSameTime(track, places.ranges, other, session);
     if (together.length === 0) continue;
     sharedWith.push(other.path);
@@ -57,7 +57,9 @@ function atTheSameTime(
   session: CheckedSession,
 ): FindingRange[] {
   const others = placesOf(other, session)?.ranges ?? [];
-  const within = session.rules.signal.dropoutSimultaneousMs / 1000;
+  // Half a sample of slack: times in seconds are not exact.
+  const within =
+    session.rules.signal.dropoutSimultaneousMs / 1000 + 0.5 / track.format.sampleRateHz;
   return ranges.filter((range) => {
     const at = range.startFrame / track.format.sampleRateHz;
     return others.some(

@@ -4,12 +4,13 @@ import { found, type TrackCheck } from '../check.ts';
 
 /**
  * Not as long as the session. Where the start is proven only the end differs, which silence
- * mends; where something shows that the start was cut, the file lies at the wrong place.
+ * mends; where something shows that the start was cut, the file lies at the wrong place. Of loose
+ * clips not-consolidated says all there is to say.
  */
 export const lengthDiffers: TrackCheck = (track, session) => {
   const { format, start, framesAtSessionRate } = track;
   const { frames, sampleRateHz } = session.format;
-  if (frames === null || sampleRateHz === null) return null;
+  if (frames === null || sampleRateHz === null || session.looseClips) return null;
   if (sameLength(format, session.format, session.rules.startAndLength.lengthToleranceFrames))
     return null;
   if (speedRatio(framesAtSessionRate, session.format, session.tracks.length) !== null) return null;

@@ -1,9 +1,9 @@
-import { looksLikeLooseClips, soundsAtOnce } from '../../compare/starts.ts';
+import { soundsAtOnce } from '../../compare/starts.ts';
 import { found, type SessionCheck } from '../check.ts';
 
 /** The set looks like clips that each begin where they begin in the song. */
-export const notConsolidated: SessionCheck = ({ tracks, format }) => {
-  if (!looksLikeLooseClips(tracks, format)) return [];
+export const notConsolidated: SessionCheck = ({ tracks, looseClips }) => {
+  if (!looseClips) return [];
   const seconds = tracks.map((track) => track.format.frames / track.format.sampleRateHz);
   return [
     found(

@@ -1,22 +1,26 @@
+import { soundingStarts } from '../borders.ts';
 import { found, type TrackCheck } from '../check.ts';
 import { highest, onlyChannel } from '../track-measures.ts';
 
-/** The first millisecond is loud and does not rise from zero: a click, or a start cut off. */
-export const startsOnSound: TrackCheck = ({ measures, format }, { rules }) => {
-  const hit = measures.channels.flatMap(({ startEdge: edge }, index) =>
-    edge.peakDbfs !== null && edge.peakDbfs > rules.signal.edgeDbfs && !edge.ramps
-      ? [{ edge, index }]
-      : [],
-  );
+/** The first sample is far from zero and nothing rises to it: a click, or a start cut off. */
+export const startsOnSound: TrackCheck = (track, session) => {
+  const hit = soundingStarts(track, session.rules.signal);
   if (hit.length === 0) return null;
-  const millisecond = Math.min(measures.frames, Math.ceil(format.sampleRateHz / 1000));
+  const millisecond = Math.ceil(track.format.sampleRateHz / 1000);
   return found(
     'starts-on-sound',
-    { peakDbfs: highest(hit.map(({ edge }) => edge.peakDbfs)) ?? 0 },
+    { peakDbfs: highest(hit.map(({ peakDbfs }) => peakDbfs)) ?? 0 },
     {
-      ...onlyChannel(hit.map(({ index }) => index)),
+      ...(session.cutFromLongerRecording ? { level: 'note' } : {}),
+      ...onlyChannel(hit.map(({ channel }) => channel)),
       places: 1,
-      ranges: [{ startFrame: 0, endFrame: millisecond, confidence: 'sure' }],
+      ranges: [
+        {
+          startFrame: 0,
+          endFrame: Math.min(track.measures.frames, millisecond),
+          confidence: 'sure',
+        },
+      ],
     },
   );
 };

@@ -1,7 +1,7 @@
 import { found, type TrackCheck } from '../check.ts';
 
 /** The file ends while something still rings well above its own floor. */
-export const tailCut: TrackCheck = ({ measures }, { rules }) => {
+export const tailCut: TrackCheck = ({ measures }, { rules, cutFromLongerRecording }) => {
   const { tailDbfs, tailAboveFloorDb } = rules.signal;
   const ringing = measures.channels.filter(
     ({ tailPeakDbfs, floorDbfs }) =>
@@ -15,6 +15,10 @@ export const tailCut: TrackCheck = ({ measures }, { rules }) => {
   return found(
     'tail-cut',
     { tailPeakDbfs: loudest.tailPeakDbfs, floorDbfs: loudest.floorDbfs },
-    { places: 1, ranges: [{ startFrame, endFrame: measures.frames, confidence: 'sure' }] },
+    {
+      ...(cutFromLongerRecording ? { level: 'note' } : {}),
+      places: 1,
+      ranges: [{ startFrame, endFrame: measures.frames, confidence: 'sure' }],
+    },
   );
 };

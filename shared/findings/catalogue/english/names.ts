@@ -1,3 +1,4 @@
+import type { ArgumentsOf } from '../definitions.ts';
 import type { names } from '../names.ts';
 import type { LanguageWords } from '../words.ts';
 
@@ -5,10 +6,7 @@ export const nameWords: Pick<LanguageWords, keyof typeof names> = {
   'name-breaks-rule': {
     words: ({ name, faults, proposedName }, format) => ({
       title: 'Not named as the rules ask',
-      what: `“${name}”: ${format.list(
-        faults.map((fault) => faultWords[fault] ?? fault),
-        'and',
-      )}.`,
+      what: `“${name}”: ${format.list(faults.slice(0, 3).map(faultWords), 'and')}.`,
       why: 'Where all names follow one pattern, files sort themselves and every part is found at once.',
       how:
         proposedName === null
@@ -55,12 +53,15 @@ export const nameWords: Pick<LanguageWords, keyof typeof names> = {
     several: (count) => `${count} names are too long`,
   },
   'name-characters': {
-    words: ({ name, characters }, format) => ({
+    words: ({ name, characters, ends }, format) => ({
       title: 'Characters that do not travel',
       what: `“${name}” has ${format.list(
-        characters.map((character) => `“${character}”`),
+        [
+          ...characters.map((character) => `“${character}” in it`),
+          ...ends.map((end) => endWords[end]),
+        ],
         'and',
-      )} in it.`,
+      )}.`,
       why: 'Some computers refuse such a name, others change it on the way.',
       how: 'Use plain letters, digits, spaces and - _ . instead.',
     }),
@@ -105,5 +106,53 @@ export const nameWords: Pick<LanguageWords, keyof typeof names> = {
   },
 };
 
+const endWords: Record<ArgumentsOf<'name-characters'>['ends'][number], string> = {
+  'dot-at-end': 'a full stop at the end',
+  'space-at-end': 'a space at the end',
+  'space-at-start': 'a space at the start',
+  'hyphen-at-start': 'a hyphen at the start',
+  'dot-at-start': 'a full stop at the start, which hides it',
+};
+
+type Fault = ArgumentsOf<'name-breaks-rule'>['faults'][number];
+
+const tokenWords: Record<Fault['token'], string> = {
+  number: 'number',
+  group: 'group',
+  instrument: 'instrument',
+  detail: 'detail',
+  side: 'side',
+  name: 'name',
+};
+
 /** What is wrong with a name, put so that it follows on the name. */
-const faultWords: Readonly<Record<string, string>> = {};
+function faultWords({ token, reason, found, expected }: Fault): string {
+  const part = tokenWords[token];
+  const wanted = expected === '' ? '' : `, such as “${expected}”`;
+  switch (reason) {
+    case 'missing':
+      return `the ${part} is missing${wanted}`;
+    case 'not-wanted':
+      return `“${found}” has no place in the pattern`;
+    case 'unknown':
+      return 'no instrument is recognised';
+    case 'wrong':
+      return `“${found}” stands for another group${expected === '' ? '' : ` than “${expected}”`}`;
+    case 'misspelt':
+      return `“${found}” should read “${expected}”`;
+    case 'digits':
+      return `the number should be written “${expected}”`;
+    case 'order':
+      return `“${found}” stands in the wrong place`;
+    case 'separator':
+      return `words should be joined by ${expected === ' ' ? 'a space' : `“${expected}”`}`;
+    case 'case':
+      return `“${found}” should be written “${expected}”`;
+    case 'leftover':
+      return `“${found}” says nothing about the part`;
+    case 'characters':
+      return `“${found}” is not allowed`;
+    case 'too-long':
+      return 'it is too long';
+  }
+}
