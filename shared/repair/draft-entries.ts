@@ -8,6 +8,8 @@ export type Draft = {
   from: string[];
   operations: Operation[];
   rewriteAsWav: boolean;
+  /** Of the output. */
+  channels: number;
   /** A proper name was asked for. */
   rename: boolean;
   /** Says which channel of a split file this is; empty for all others. */
@@ -126,9 +128,11 @@ function canJoin(sides: string[], tracks: ReadonlyMap<string, DraftedTrack>): bo
 function draftTrack(track: DraftedTrack, from: string[], repairs: readonly Repair[]): Draft[] {
   const operations = repairs.flatMap((repair) => operationsFor(repair, track));
   if (from.length === 2) operations.push({ kind: 'join' });
+  const isMono = operations.some(({ kind }) => kind === 'take-channel');
   const draft: Draft = {
     from,
     operations: inOrder(operations, track.format.frames),
+    channels: from.length === 2 ? 2 : isMono ? 1 : track.format.channels,
     rewriteAsWav: repairs.some(({ choice }) => choice.repair === 'rewrite-container'),
     rename: repairs.some(({ choice }) => choice.repair === 'rename' || choice.repair === 'join'),
     channelLabel: '',
@@ -139,6 +143,7 @@ function draftTrack(track: DraftedTrack, from: string[], repairs: readonly Repai
   return channelLabels(track).map((channelLabel, channel) => ({
     ...draft,
     operations: [{ kind: 'take-channel', channel }, ...draft.operations],
+    channels: 1,
     channelLabel,
   }));
 }

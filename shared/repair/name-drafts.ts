@@ -1,44 +1,58 @@
-import { nameFiles } from '../judge/file-names.ts';
+import { parseName } from '../naming/parse-name.ts';
+import { proposeNames, type FileToName } from '../naming/propose-names.ts';
 import { fileNameOf, splitExtension } from '../pack/safe-names.ts';
 import type { NamingRules } from '../rules/naming-rules.ts';
 import type { SessionInformation } from '../session/session-information.ts';
 import type { Draft } from './draft-entries.ts';
 
-/** The word for one side at the end of a name, as people and programs write it. */
-const sideWord = /[\s._-]*[([]?\b(l|r|left|right)\b[)\]]?$/i;
-
 /**
  * A name for every draft, without extension: given by hand, else the proposal where a proper name
- * was asked for, else the one the file has. Proposals are made for all drafts together, so that
- * running numbers have no holes after a join or a file that was left out.
+ * was asked for, else the one the file has. Proposals are made for all drafts together and keep
+ * clear of the names that stay.
  */
 export function nameDrafts(
   drafts: readonly Draft[],
   naming: NamingRules,
   information: SessionInformation,
 ): string[] {
-  const paths = drafts.map(pathFor);
-  const names: Record<string, string> = {};
-  for (const [index, draft] of drafts.entries()) {
+  const { artist, title, roles } = information;
+  const files = drafts.map((draft, index): FileToName => {
+    // Drafts of one split file would share a path.
+    const path = `${index}/${pathOf(draft, naming)}`;
     const hand = handName(draft, information);
-    if (hand !== null) names[paths[index]!] = hand;
-  }
-  const named = nameFiles(paths, naming, { ...information, roles: {}, names });
-  return drafts.map((draft, index) => {
-    const path = paths[index]!;
-    const proposed = draft.rename ? named[index]?.proposedName : null;
-    return names[path] ?? proposed ?? splitExtension(fileNameOf(path)).base;
+    const role = roles[draft.from[0] ?? ''];
+    const handMade = hand ?? (draft.rename ? null : stemOf(path));
+    return {
+      path,
+      parsed: parseName(pathOf(draft, naming), naming, { artist, title }),
+      channels: draft.channels,
+      ...(handMade !== null && { handMade }),
+      ...(role && { role }),
+    };
   });
+  const proposed = proposeNames(files, naming, { names: {}, roles: {} });
+  return files.map(({ path, handMade }) => handMade ?? proposed.get(path) ?? stemOf(path));
 }
 
+const stemOf = (path: string): string => splitExtension(fileNameOf(path)).base;
+
 /** The path a draft would have if it had been dropped like this. */
-function pathFor({ from, channelLabel }: Draft): string {
+function pathOf({ from, channelLabel }: Draft, naming: NamingRules): string {
   const [first = ''] = from;
   const fileName = fileNameOf(first);
   const folder = first.slice(0, first.length - fileName.length);
   const { base, extension } = splitExtension(fileName);
-  const part = from.length === 2 ? base.replace(sideWord, '') || base : base;
+  const part = from.length === 2 ? withoutSide(base, naming) : base;
   return folder + (channelLabel === '' ? part : `${part} ${channelLabel}`) + extension;
+}
+
+/** `Piano (L)` becomes `Piano`: what is joined has both sides. */
+function withoutSide(name: string, naming: NamingRules): string {
+  const span = parseName(`${name}.wav`, naming).spans.findLast(({ kind }) => kind === 'side');
+  if (!span) return name;
+  const before = name.slice(0, span.start).replace(/[\s._([-]+$/, '');
+  const after = name.slice(span.end).replace(/^[\s._)\]-]+/, '');
+  return [before, after].filter((part) => part !== '').join(' ') || name;
 }
 
 function handName({ from, channelLabel }: Draft, { names }: SessionInformation): string | null {
