@@ -1,6 +1,7 @@
+import { execFile } from 'node:child_process';
+import { promisify } from 'node:util';
 import type { ComparedTrack } from '#shared/compare/match-candidates.ts';
 import type { ReadFrames } from '#shared/compare/verify-match.ts';
-import { runForBytes } from './outside-programs.ts';
 import { measuredFile } from './measure-builders.ts';
 
 /** Sounds in memory, as the comparison sees them, with reads that are counted. */
@@ -14,9 +15,11 @@ export const recordings = '/usr/share/sonic-pi/samples';
 
 /** Decodes a recording with ffmpeg: one array, mono, 48 kHz. */
 export async function decodeMono(path: string): Promise<Float32Array> {
-  const bytes = await runForBytes('ffmpeg', [
-    ...['-v', 'error', '-i', path, '-ac', '1', '-ar', '48000', '-f', 'f32le', '-'],
-  ]);
+  const { stdout: bytes } = await promisify(execFile)(
+    'ffmpeg',
+    ['-v', 'error', '-i', path, '-ac', '1', '-ar', '48000', '-f', 'f32le', '-'],
+    { maxBuffer: 1 << 28, encoding: 'buffer' },
+  );
   return new Float32Array(bytes.buffer.slice(bytes.byteOffset, bytes.byteOffset + bytes.length));
 }
 

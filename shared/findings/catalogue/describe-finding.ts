@@ -23,7 +23,7 @@ export function describeFinding(finding: Finding, language: Language = english):
   return {
     ...said,
     title: ofCode.several(finding.files.length),
-    what: format.files(finding.files),
+    what: `${format.files(finding.files)}.`,
   };
 }
 

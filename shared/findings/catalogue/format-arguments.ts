@@ -3,7 +3,7 @@
  * another language can bring their own.
  */
 export type ArgumentFormat = {
-  /** A length or a moment: `3:25`, `1:02:25`, with `precise` to the millisecond: `0:01.250`. */
+  /** A length or a moment: `3:25`, `1:02:25`; `precise`: with milliseconds if any, `0:01.250`. */
   time: (seconds: number, precise?: boolean) => string;
   /** A very short time: `12 ms`, `0.4 ms`. */
   milliseconds: (milliseconds: number) => string;
@@ -39,7 +39,8 @@ export const englishFormat: ArgumentFormat = {
     const minutes = Math.floor((whole % 3600) / 60);
     const rest = String(whole % 60).padStart(2, '0');
     const start = hours > 0 ? `${hours}:${String(minutes).padStart(2, '0')}` : `${minutes}`;
-    return `${start}:${rest}${precise ? `.${String(thousandths % 1000).padStart(3, '0')}` : ''}`;
+    const left = precise ? thousandths % 1000 : 0;
+    return `${start}:${rest}${left > 0 ? `.${String(left).padStart(3, '0')}` : ''}`;
   },
   milliseconds(milliseconds) {
     const size = Math.abs(milliseconds);

@@ -48,7 +48,7 @@ export const names = {
     level: 'off',
     nextStep: 'decide',
     rule: 'names.tokens',
-    repairs: ['rename'],
+    repairs: [],
   }),
   'name-too-long': define({
     arguments: z.strictObject({

@@ -101,7 +101,7 @@ export const fileAndFormatWords: Pick<LanguageWords, keyof typeof fileAndFormat>
   },
   'sample-rate-not-allowed': {
     words: ({ sampleRateHz, allowedHz }, format) => ({
-      title: `All files have ${format.rate(sampleRateHz)}`,
+      title: `All files are at ${format.rate(sampleRateHz)}`,
       what: `The rules ask for ${format.list(
         allowedHz.map((rate) => format.rate(rate)),
         'or',
@@ -152,7 +152,7 @@ export const fileAndFormatWords: Pick<LanguageWords, keyof typeof fileAndFormat>
       what: dualMonoWhat(identical, nearly, sideUnderMidDb, gainDb, format),
       why: 'A mono part in a stereo file takes up twice the room, and panning and widening act differently on it.',
       how: nearly
-        ? 'Listen whether you need both sides. If not, export it again as mono.'
+        ? 'Find out by listening whether both sides are needed. If not, export it again as mono.'
         : 'We can keep one side as a mono file. How loud each side was is written down for the engineer.',
     }),
     several: (count) => `${count} files have the same sound on both sides`,

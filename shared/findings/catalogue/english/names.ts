@@ -40,7 +40,7 @@ export const nameWords: Pick<LanguageWords, keyof typeof names> = {
           : `${numbers.length} numbers are missing`,
       what: `There is no file with the number ${format.list(numbers.slice(0, 5).map(String), 'and')}${numbers.length > 5 ? ', and so on' : ''}.`,
       why: 'A gap can mean that a file was forgotten.',
-      how: 'See whether a file is missing. If not, we can number the files anew.',
+      how: 'See whether a file is missing. If not, nothing has to be done.',
     }),
   },
   'name-too-long': {
@@ -100,7 +100,7 @@ export const nameWords: Pick<LanguageWords, keyof typeof names> = {
     words: ({ part, takes }, format, { files }) => ({
       title: `${takes} takes of ${part}`,
       what: `${format.files(files)} look like takes of one part.`,
-      why: 'Which take is the right one is yours to choose. All together they are a mess.',
+      why: 'Which take is the right one is yours to choose. Played together they blur the part.',
       how: 'Keep the chosen take and leave the others out. If all of them shall play, say that it is on purpose.',
     }),
   },
@@ -128,7 +128,8 @@ const tokenWords: Record<Fault['token'], string> = {
 /** What is wrong with a name, put so that it follows on the name. */
 function faultWords({ token, reason, found, expected }: Fault): string {
   const part = tokenWords[token];
-  const wanted = expected === '' ? '' : `, such as “${expected}”`;
+  const wanted =
+    expected === '' ? '' : token === 'number' ? `, such as “${expected}”` : ` (“${expected}”)`;
   switch (reason) {
     case 'missing':
       return `the ${part} is missing${wanted}`;

@@ -11,7 +11,11 @@ export const startAndLengthWords: Pick<LanguageWords, keyof typeof startAndLengt
           ? format.count(Math.abs(differenceFrames), 'sample', 'samples')
           : format.time(differenceSeconds, true);
       const title = `${by} ${shorter ? 'shorter' : 'longer'} than the session`;
-      const lengths = `It is ${format.time(lengthSeconds, true)} long, the session ${format.time(sessionLengthSeconds, true)}.`;
+      const precise = Math.abs(differenceSeconds) < 10;
+      const lengths =
+        Math.abs(differenceSeconds) < 0.001
+          ? `It is ${by} ${shorter ? 'shorter' : 'longer'} than most others.`
+          : `It is ${format.time(lengthSeconds, precise)} long, the session ${format.time(sessionLengthSeconds, precise)}.`;
       if (args.shiftSeconds !== null)
         return {
           title,
