@@ -1,7 +1,10 @@
 import { realpath, stat } from 'node:fs/promises';
 import { basename, relative, resolve, sep } from 'node:path';
 import type { DroppedFile } from '#shared/bytes/byte-source.ts';
+import { isZip, openZip, type ZipProblemReason } from '#shared/bytes/zip-source.ts';
 import { AppError } from '#shared/errors.ts';
+import { withoutCommonFolder } from '#shared/session/common-folder.ts';
+import { isJunk } from '#shared/session/junk-files.ts';
 import { listFolder, openNodeFile, type FolderProblem } from './node-files.ts';
 
 export type Intake = {
@@ -36,9 +39,7 @@ export async function readIntake(
     throw noAccess(target, error);
   });
   const root = await realpath(target);
-  const intake = info.isDirectory()
-    ? await readFolder(root, out, signal)
-    : { files: [], problems: [], root, isFolder: false };
+  const intake = info.isDirectory() ? await readFolder(root, out, signal) : await readZip(root);
   if (intake.files.length === 0) throw new AppError('nothing-to-check', { path: target });
   return roughMix === null ? { ...intake, roughMix } : await withRoughMix(intake, roughMix);
 }
@@ -55,6 +56,48 @@ async function readFolder(
     problems: problems.map(({ path, reason }) => ({ path, reason: folderReasons[reason] })),
     root,
     isFolder: true,
+  };
+}
+
+const zipReasons: Record<ZipProblemReason, string> = {
+  'absolute-path': 'its name leads out of the folder',
+  'parent-folder': 'its name leads out of the folder',
+  'drive-letter': 'its name leads out of the folder',
+  backslash: 'its name holds a backslash',
+  'nul-in-name': 'it has no usable name',
+  'no-name': 'it has no usable name',
+  symlink: 'a link is not followed',
+  'special-file': 'it is no ordinary file',
+  encrypted: 'it is encrypted',
+  'nested-zip': 'a zip within a zip is not opened',
+  'unknown-compression': 'it is packed in a way that cannot be read here',
+  'name-repeated': 'another file in the zip has the same name',
+  'damaged-entry': 'the zip is damaged there',
+};
+
+/** Entries that are there and cannot be read: one of them may be a track, so they are checked. */
+const closedReasons = new Set<ZipProblemReason>([
+  'encrypted',
+  'unknown-compression',
+  'damaged-entry',
+]);
+
+function closedFile({ path }: { path: string }): DroppedFile {
+  return { path, size: 0, open: () => Promise.reject(new AppError('no-access', { path })) };
+}
+
+/** The zip stays open while its files are used, which is as long as the program runs. */
+async function readZip(root: string): Promise<Omit<Intake, 'roughMix'>> {
+  const source = await openNodeFile(root);
+  if (!(await isZip(source)))
+    throw new AppError('zip-refused', { reason: 'not-a-zip', path: root });
+  const { files, problems } = await openZip(source);
+  const closed = problems.filter(({ reason }) => closedReasons.has(reason)).map(closedFile);
+  return {
+    files: withoutCommonFolder([...files, ...closed], isJunk),
+    problems: problems.map(({ path, reason }) => ({ path, reason: zipReasons[reason] })),
+    root,
+    isFolder: false,
   };
 }
 

@@ -11,12 +11,23 @@ const sentences: Partial<Record<AppErrorCode, (words: Words) => string>> = {
     `${path} changed after it was checked, so no package was written. Check again.`,
   'already-taken': ({ path }) =>
     `${path} is one of the files that are checked. Give the package another name.`,
-  'zip-refused': ({ text }) => {
+  'zip-refused': ({ path, text }) => {
+    const reason = text('reason');
+    if (reason === 'not-a-zip') return `${path || 'This file'} is neither a folder nor a zip.`;
     const entry = text('entry') === '' ? '' : `, at ${printable(text('entry'))}`;
-    return `The zip cannot be read safely (${text('reason')}${entry}).`;
+    return `The zip cannot be opened safely: ${zipReasons[reason] ?? reason}${entry}.`;
   },
   'engine-failed': ({ text }) => `The meters could not be loaded: ${text('reason')}`,
   cancelled: () => 'Stopped.',
+};
+
+const zipReasons: Record<string, string> = {
+  'damaged-directory': 'its list of files is damaged or cut short',
+  'several-parts': 'it is one of several parts',
+  'too-many-entries': 'it holds more files than any session has',
+  'overlapping-entries': 'its files overlap, as in a zip made to do harm',
+  'too-large': 'it would unpack to far more than it is',
+  'damaged-entry': 'it is damaged',
 };
 
 /** An expected failure as one sentence for whoever typed the command. */

@@ -12,10 +12,14 @@ const projectFiles =
   /\.(als|alp|flp|ptx|ptf|pts|cpr|npr|rpp|rpp-bak|song|aup|aup3|cwp|cwb|bwproject|reason|rns|sesx|ses|dawproject|omf|aaf|bak|tmp)$/i;
 const projectFolders = /\.(logicx|band|flexproj)(\/|$)/i;
 
+/** What a package holds beside the files that were dropped: it is made anew each time. */
+const madeForThePackage = /^(track sheet\.pdf|check-report\.json|sha256sums\.txt)$/i;
+
 /** Whether a file (path with `/`) is junk by its name. */
 export function isJunk(path: string): boolean {
   const name = path.slice(path.lastIndexOf('/') + 1);
   return (
+    madeForThePackage.test(path) ||
     systemLeftovers.test(name) ||
     leftoverFolders.test(path) ||
     peakCaches.test(name) ||

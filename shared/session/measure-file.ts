@@ -1,4 +1,5 @@
 import type { ByteSource, DroppedFile } from '../bytes/byte-source.ts';
+import type { ZippedFile } from '../bytes/zip-source.ts';
 import { AppError } from '../errors.ts';
 import { measureTrack } from '../measure/measure-track.ts';
 import type { MeterEngine } from '../measure/meter.ts';
@@ -24,21 +25,25 @@ export function measureHere(engine: MeterEngine): MeasureFile {
     try {
       const source = await file.open();
       try {
-        return await measureSource(file.path, source, engine, options);
+        const measured = await measureSource(file.path, source, engine, options);
+        return isDamaged(measured, file) ? unmeasured(file.path, file.size, notReadable) : measured;
       } finally {
         await source.close();
       }
     } catch (error) {
       if (error instanceof AppError && ['no-access', 'zip-refused'].includes(error.code)) {
-        return unmeasured(file.path, file.size, {
-          kind: 'unreadable',
-          reason: 'could-not-be-read',
-          byteOffset: 0,
-        });
+        return unmeasured(file.path, file.size, notReadable);
       }
       throw error;
     }
   };
+}
+
+const notReadable = { kind: 'unreadable', reason: 'could-not-be-read', byteOffset: 0 } as const;
+
+/** A zip says which CRC its files have; another one means that the zip is damaged there. */
+function isDamaged({ measures }: MeasuredFile, file: DroppedFile | ZippedFile): boolean {
+  return 'crc32' in file && measures !== null && parseInt(measures.crc32, 16) !== file.crc32;
 }
 
 /** Reads and measures bytes from wherever they come. Throws AppError `no-access`. */
