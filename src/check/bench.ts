@@ -136,6 +136,9 @@ export class Bench {
   }
 
   private set(change: Partial<BenchState>): void {
+    const { failure } = change;
+    // Expected failures are said on screen; a bug also belongs where bugs are looked for.
+    if (failure != null && !(failure instanceof AppError)) reportError(failure);
     this.state = { ...this.state, ...change };
     for (const listener of this.listeners) listener();
   }
@@ -162,7 +165,9 @@ export class Bench {
         { signal: running.signal },
       );
       await this.judge();
-      if (!running.signal.aborted) this.set({ phase: 'checked' });
+      const { failure } = this.state;
+      if (running.signal.aborted) return;
+      this.set(failure === null ? { phase: 'checked' } : { ...waiting, failure });
     } catch (failure) {
       if (!running.signal.aborted) this.set({ ...waiting, failure });
     }

@@ -34,7 +34,7 @@ serveWorker<SessionApi>({
       check,
       repaired,
       report,
-      trackSheet: null,
+      trackSheet: new Uint8Array(0),
       checksums: await loadChecksums(),
     });
     return { fileName: prepared.fileName, bytes: prepared.bytes };
