@@ -80,7 +80,7 @@ export async function walkChunks(
     // Letters that are no chunk of ours and promise more than there is: garbage after the audio.
     if (contentBytes < declaredBytes && !knownIds.has(id) && chunks.length >= 2) break;
     chunks.push({ id, contentOffset, contentBytes, declaredBytes });
-    at = await nextChunkOffset(reader, contentOffset + contentBytes, declaredBytes);
+    at = await nextChunkOffset(reader, contentOffset + contentBytes, declaredBytes, bigEndian);
   }
   return { chunks, endOffset: Math.min(at, reader.size) };
 }
@@ -93,6 +93,7 @@ async function nextChunkOffset(
   reader: BoundedReader,
   contentEnd: number,
   declaredBytes: number,
+  bigEndian: boolean,
 ): Promise<number> {
   if (declaredBytes % 2 === 0 || contentEnd + 8 > reader.size)
     return contentEnd + (declaredBytes % 2);
@@ -101,5 +102,8 @@ async function nextChunkOffset(
   const padded = chunkId(bytes, 1);
   if (knownIds.has(padded)) return contentEnd + 1;
   if (knownIds.has(forgotten)) return contentEnd;
-  return contentEnd + 1;
+  // A pad byte is zero; letters in its place that begin a chunk of a possible size are none.
+  const size = new DataView(bytes.buffer, bytes.byteOffset).getUint32(4, !bigEndian);
+  const fits = isPrintable(forgotten) && contentEnd + 8 + size <= reader.size;
+  return fits ? contentEnd : contentEnd + 1;
 }
