@@ -3,20 +3,11 @@ import type { Difference } from '#shared/api/reports.ts';
 import type { Finding } from '#shared/findings/finding.ts';
 import { verdictOf, countLevels } from '#shared/judge/verdict.ts';
 import type { CheckReport } from '#shared/report/check-report.ts';
+import { droppedFindings } from '#shared/report/compare-reports.ts';
 import type { Rejudgement } from './rejudge.ts';
 
 /** A report with more differences than this is no honest one; the rest adds nothing. */
 const maxDifferences = 200;
-
-/** The findings about what was dropped, those of its files too, as the judge would list them. */
-function droppedFindings({ files, session }: CheckReport): Finding[] {
-  return [
-    ...files.flatMap(({ path, findings }) =>
-      findings.map((finding) => ({ ...finding, files: [path] })),
-    ),
-    ...session.findings,
-  ];
-}
 
 /**
  * Whether verdicts and counts are what follows from the report's own findings. No honest report

@@ -9,6 +9,8 @@ import type {
 } from '#shared/api/reports.ts';
 import { AppError } from '#shared/errors.ts';
 import { maxReportBytes, type CheckReport } from '#shared/report/check-report.ts';
+import { readReport } from '#shared/report/read-report.ts';
+import { readOverviews } from '#shared/report/stored-overviews.ts';
 import type { Person } from '../accounts/sessions.ts';
 import { fromNow, msPerDay } from '../clock.ts';
 import { isTextNotStorable } from '../db/failures.ts';
@@ -43,8 +45,11 @@ function toSummary(row: SummaryRow): ReportSummary {
   };
 }
 
+/** A report stored by an earlier version is brought to today's shape on reading. */
 function toStored(row: ReportRow): StoredReport {
-  return { ...toSummary(row), report: row.report, differences: row.differences };
+  const reading = readReport(row.report);
+  if (!('report' in reading)) throw new Error(`a stored report that is ${reading.problem}`);
+  return { ...toSummary(row), report: reading.report, differences: row.differences };
 }
 
 type Submission = {
@@ -156,20 +161,20 @@ export async function putOverviews(
   { reportId }: AuthorizedReport<'add-overviews'>,
   overviews: Uint8Array,
 ): Promise<void> {
-  await requireGzip(overviews);
+  await requireOverviews(overviews);
   if (await queries.insertOverviews(db, { reportId, overviews, createdAt: clock.now() })) return;
   const stored = await queries.findOverviews(db, reportId);
   if (!stored || Buffer.compare(stored, overviews) !== 0) throw new AppError('conflict');
 }
 
-async function requireGzip(bytes: Uint8Array): Promise<void> {
-  try {
-    await gunzipAsync(bytes, { maxOutputLength: maxUnpackedOverviewBytes });
-  } catch {
-    throw new AppError('invalid-request', {
-      issues: [{ path: 'body', message: 'not gzip, or too large when unpacked' }],
-    });
-  }
+async function requireOverviews(bytes: Uint8Array): Promise<void> {
+  const unpacked = await gunzipAsync(bytes, { maxOutputLength: maxUnpackedOverviewBytes }).catch(
+    () => null,
+  );
+  if (unpacked && readOverviews(unpacked)) return;
+  throw new AppError('invalid-request', {
+    issues: [{ path: 'body', message: 'no overviews in gzip, or too large when unpacked' }],
+  });
 }
 
 export async function getOverviews(
