@@ -1,11 +1,13 @@
 import { packSession, repairSession } from '#shared/check.ts';
 import { createMeters } from '#shared/measure/create-meters.ts';
+import { drawTrackSheet } from '#shared/pack/track-sheet/draw-track-sheet.ts';
 import type { Package } from '#shared/pack/pack-entries.ts';
 import { compareFiles } from '#shared/session/compare-files.ts';
 import { measureHere, type MeasureFile } from '#shared/session/measure-file.ts';
 import { writeToPickedFile } from '../browser/write-picked-file.ts';
 import { loadChecksums } from '../browser/checksums.ts';
 import { fileOnDisk } from '../browser/file-source.ts';
+import { loadSheetFont } from '../browser/load-sheet-font.ts';
 import { serveWorker } from './bridge.ts';
 import type { FileToRead, SessionApi } from './session-api.ts';
 import { sendThroughPort } from './stream-port.ts';
@@ -34,7 +36,7 @@ serveWorker<SessionApi>({
       check,
       repaired,
       report,
-      trackSheet: new Uint8Array(0),
+      trackSheet: await drawTrackSheet(report, loadSheetFont),
       checksums: await loadChecksums(),
     });
     return { fileName: prepared.fileName, bytes: prepared.bytes };
