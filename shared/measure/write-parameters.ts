@@ -78,6 +78,7 @@ export function writeParameters(
     quantisationStep(format),
     fullScaleLevel(format),
     deepestGrid(format),
+    format.encoding === 'pcm' ? deepestGrid(format) : deepestGrid(format) + 1,
   ];
   new Float64Array(memory, address, parameters.length).set(parameters);
 }

@@ -31,31 +31,17 @@ export function offsetBytes(from: usize, to: usize, bytes: usize): void {
   }
 }
 
-/** Copies one side of `frames` interleaved stereo frames; `from` is that side's first sample. */
-export function takeSide(from: usize, to: usize, frames: usize, sampleBytes: usize): void {
+/** Copies one channel of `frames` interleaved frames; `from` is that channel's first sample. */
+export function takeChannel(
+  from: usize,
+  to: usize,
+  frames: usize,
+  sampleBytes: usize,
+  channels: usize,
+): void {
   const end = to + frames * sampleBytes;
-  if (sampleBytes == 3) takeSide24(from, to, end);
-  else if (sampleBytes == 2) takeSide16(from, to, end);
-  else if (sampleBytes == 4) takeSide32(from, to, end);
-  else takeEveryNth(from, to, end, sampleBytes, 2);
-}
-
-function takeSide16(from: usize, to: usize, end: usize): void {
-  for (; to < end; from += 32, to += 16) {
-    const a = v128.load(from);
-    const b = v128.load(from, 16);
-    v128.store(to, v128.shuffle<i16>(a, b, 0, 2, 4, 6, 8, 10, 12, 14));
-  }
-}
-
-function takeSide24(from: usize, to: usize, end: usize): void {
-  for (; to < end; from += 48, to += 24) {
-    const a = v128.load(from);
-    const b = v128.load(from, 16);
-    const c = v128.load(from, 32);
-    v128.store(to, i8x16.shuffle(a, b, 0, 1, 2, 6, 7, 8, 12, 13, 14, 18, 19, 20, 24, 25, 26, 30));
-    v128.store(to, i8x16.shuffle(b, c, 15, 16, 20, 21, 22, 26, 27, 28, 0, 0, 0, 0, 0, 0, 0, 0), 16);
-  }
+  if (channels == 2 && sampleBytes == 4) takeSide32(from, to, end);
+  else takeEveryNth(from, to, end, sampleBytes, channels);
 }
 
 function takeSide32(from: usize, to: usize, end: usize): void {
@@ -66,8 +52,8 @@ function takeSide32(from: usize, to: usize, end: usize): void {
   }
 }
 
-/** Any number of channels, one sample at a time. */
-export function takeEveryNth(
+/** One sample at a time. */
+function takeEveryNth(
   from: usize,
   to: usize,
   end: usize,

@@ -2,7 +2,7 @@ import { allocate } from './arena';
 import { granuleFrames } from './block';
 import { Channel } from './channel';
 import { countCycles, isCounting, resetCycles } from './cycles';
-import { highest, lowest } from './levels';
+import { blockHighest, blockLowest, highest, lowest } from './levels';
 import { clippingFloor, clippingTolerance, fullScaleLevel, shortestRun } from './parameters';
 import { addPlace, newPlaces, Places } from './places';
 import { extendRun, leavesSteeply, Run, startRun } from './run';
@@ -56,6 +56,15 @@ export function findClipping<T extends number>(channel: Channel, start: f64, fra
 /** Behind the file there is silence. */
 export function endClipping<T extends number>(channel: Channel, end: f64): void {
   followSample(channel, end, 0, end > 0 ? sampleAt<T>(channel, -1) : 0, true);
+}
+
+function touchesCeiling(channel: Channel, low: f64, high: f64): bool {
+  return (
+    reaches(channel.upper, high) ||
+    reaches(channel.lower, -low) ||
+    channel.upper.run.length > 0 ||
+    channel.lower.run.length > 0
+  );
 }
 
 function reaches(side: Side, level: f64): bool {

@@ -1,3 +1,4 @@
+import { larger } from './extremes';
 import { allocate } from './arena';
 import { clippingFloor, clippingTolerance, mostCycles, shortestRun } from './parameters';
 import { extendRun, leavesSteeply, Run, startRun } from './run';
@@ -53,7 +54,7 @@ export function countCycles(cycles: Cycles, sample: f64, before: f64): void {
     cycles.peak = 0;
     cycles.flatLevel = 0;
   }
-  cycles.peak = max(cycles.peak, Math.abs(sample));
+  cycles.peak = larger(cycles.peak, Math.abs(sample));
 }
 
 /** `sample` seen from the side of zero on which `reference` is. */
@@ -65,7 +66,7 @@ function endFlatRun(cycles: Cycles, after: f64): void {
   const run = cycles.run;
   if (run.length < shortestRun || Math.abs(cycles.first) <= clippingFloor) return;
   if (!leavesSteeply(run, upright(cycles.first, after))) return;
-  cycles.flatLevel = max(cycles.flatLevel, run.high);
+  cycles.flatLevel = larger(cycles.flatLevel, run.high);
 }
 
 /** Counts the cycle that has ended. */

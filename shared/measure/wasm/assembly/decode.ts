@@ -14,24 +14,24 @@ export const enum Kind {
 
 const widen24 = i8x16(-1, 0, 1, 2, -1, 3, 4, 5, -1, 6, 7, 8, -1, 9, 10, 11);
 
-/** Returns whether a sample was not a number (NaN or infinite); such samples become 0. */
+/** Returns whether all samples were numbers; NaN and infinity become 0. */
 export function decode(kind: Kind, from: usize, to: usize, frames: usize): bool {
   switch (kind) {
     case Kind.pcm8: {
       decode8(from, to, frames);
-      return false;
+      return true;
     }
     case Kind.pcm16: {
       decode16(from, to, frames);
-      return false;
+      return true;
     }
     case Kind.pcm24: {
       decode24(from, to, frames);
-      return false;
+      return true;
     }
     case Kind.pcm32: {
       decode32(from, to, frames);
-      return false;
+      return true;
     }
     case Kind.float32:
       return decodeFloat<f32>(from, to, frames);
@@ -80,5 +80,5 @@ function decodeFloat<T extends number>(from: usize, to: usize, frames: usize): b
     allFinite = v128.and(allFinite, finite);
     v128.store(to, v128.and(samples, finite));
   }
-  return !v128.all_true<i32>(allFinite);
+  return v128.all_true<i32>(allFinite);
 }

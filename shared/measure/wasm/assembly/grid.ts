@@ -1,5 +1,5 @@
 import { Channel } from './channel';
-import { deepestGrid } from './parameters';
+import { deepestGrid, settledGrid } from './parameters';
 
 /**
  * The coarsest grid of whole numbers all samples lie on: the bits that are really used. While
@@ -10,7 +10,7 @@ export function followGrid<T extends number>(channel: Channel, frames: i32): voi
   const samples = channel.samples;
   const end = samples + <usize>frames * sizeof<T>();
   let at = samples;
-  while (channel.gridBits <= deepestGrid) {
+  while (channel.gridBits < settledGrid) {
     at = firstOffGrid<T>(at, end, gridScale(channel.gridBits));
     if (at >= end) return;
     refineGrid(channel, <f64>load<T>(at));

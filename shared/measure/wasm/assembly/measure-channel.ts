@@ -1,9 +1,15 @@
-import { granuleFrames } from './block';
 import { Channel } from './channel';
 import { endClipping, findClipping } from './clipping';
 import { endCycle, isCounting } from './cycles';
 import { followGrid } from './grid';
-import { highest, lowest, measureGranules, squares, sums } from './levels';
+import {
+  blockHighest,
+  blockLowest,
+  blockPeak,
+  blockSquares,
+  blockSum,
+  measureGranules,
+} from './levels';
 import { endOutliers, findNonNumbers, findOvers } from './outliers';
 import { drawGranules } from './overview';
 import { put, putPlaces } from './results';
@@ -11,7 +17,7 @@ import { edgePeak, isRamp } from './ramp';
 import { endSilence, findSilence } from './silence';
 import { findSound } from './sound';
 import { findTruePeak } from './true-peak';
-import { endSoundWindow, fillWindows, findFloor, followTail } from './windows';
+import { endWindows, fillWindows, findFloor, followTail } from './windows';
 
 /**
  * All meters of one channel over one block of `frames`, of which `start` came before.
@@ -27,7 +33,12 @@ export function measureChannel<T extends number>(
   if (!clean) findNonNumbers<T>(channel, bytes, start, frames);
   else endOutliers(channel.notANumber, start);
   measureGranules<T>(channel.samples, frames);
-  addGranules<T>(channel, start, frames);
+  channel.lowest = min(channel.lowest, blockLowest);
+  channel.highest = max(channel.highest, blockHighest);
+  channel.sum += blockSum;
+  channel.sumOfSquares += blockSquares;
+  if (blockPeak > 1) findOvers<T>(channel, start, frames);
+  else endOutliers(channel.overFullScale, start);
   drawGranules<T>(channel, frames);
   findSound<T>(channel, start, frames);
   fillWindows(channel, frames);
@@ -42,27 +53,11 @@ export function measureChannel<T extends number>(
   }
 }
 
-function addGranules<T extends number>(channel: Channel, start: f64, frames: i32): void {
-  let low: f64 = 0;
-  let high: f64 = 0;
-  for (let first = 0; first < frames; first += granuleFrames) {
-    const at = (<usize>(first / granuleFrames)) << 3;
-    low = min(low, load<f64>(lowest + at));
-    high = max(high, load<f64>(highest + at));
-    channel.sum += load<f64>(sums + at);
-    channel.sumOfSquares += load<f64>(squares + at);
-  }
-  channel.lowest = min(channel.lowest, low);
-  channel.highest = max(channel.highest, high);
-  if (max(high, -low) > 1) findOvers<T>(channel, start, frames);
-  else endOutliers(channel.overFullScale, start);
-}
-
 /** Ends what is still going on behind frame `end`, the file's last, and puts all results. */
 export function finishChannel<T extends number>(channel: Channel, end: f64): void {
   endOutliers(channel.notANumber, end);
   endOutliers(channel.overFullScale, end);
-  endSoundWindow(channel);
+  endWindows(channel);
   endClipping<T>(channel, end);
   if (isCounting(channel.cycles)) endCycle(channel.cycles);
   endSilence<T>(channel, end, 0);

@@ -1,5 +1,5 @@
 import { allocate, resetArena } from './arena';
-import { offsetBytes, slackBytes, swapBytes, takeEveryNth, takeSide } from './canonical-bytes';
+import { offsetBytes, slackBytes, swapBytes, takeChannel } from './canonical-bytes';
 import { blockFrames, historyFrames } from './block';
 import { Channel, newChannel } from './channel';
 import { finishCrc, resetCrc, updateCrc } from './crc32';
@@ -19,6 +19,7 @@ import {
   signedBytes,
 } from './parameters';
 import { openResults, put, resultList } from './results';
+import { decodeStereo16, decodeStereo24 } from './stereo-blocks';
 import { finishHash, newHash, updateHash } from './xxh3';
 
 /**
@@ -129,19 +130,41 @@ export function finish(): usize {
 function measureBlock(bytes: usize, frames: i32): void {
   const count = <usize>frames;
   const block = toCanonicalOrder(bytes, count * channels * sampleBytes);
+  const allFinite = decodeBlock(block, count);
   for (let c = 0; c < measured; c++) {
     const channel = channelAt(c);
-    const own = channels == 1 ? block : takeChannel(channel, block, c, count);
+    const own = channels == 1 ? block : channel.bytes;
     if (frames == blockFrames) updateHash(channel.hash, own, count * sampleBytes);
     else finishHash(channel.hash, own, count * sampleBytes);
     if (frames == 0) continue;
-    const clean = !decode(<Kind>sampleKind, own, channel.samples, count);
-    if (sampleSize == 4) measureChannel<f32>(channel, own, framesDone, frames, clean);
-    else measureChannel<f64>(channel, own, framesDone, frames, clean);
+    if (sampleSize == 4) measureChannel<f32>(channel, own, framesDone, frames, allFinite);
+    else measureChannel<f64>(channel, own, framesDone, frames, allFinite);
   }
   for (let pair = 0; pair < measured >> 1; pair++) addProducts(pair, frames);
   for (let c = 0; c < measured; c++) keepHistory(channelAt(c), frames);
   framesDone += <f64>frames;
+}
+
+/** Fills every channel's samples and, of several channels, bytes. */
+function decodeBlock(block: usize, frames: usize): bool {
+  const one = channelAt(0);
+  if (channels == 1) return decode(<Kind>sampleKind, block, one.samples, frames);
+  if (channels == 2 && (sampleKind == Kind.pcm16 || sampleKind == Kind.pcm24)) {
+    const other = channelAt(1);
+    if (sampleKind == Kind.pcm16) {
+      decodeStereo16(block, frames, one.samples, other.samples, one.bytes, other.bytes);
+    } else {
+      decodeStereo24(block, frames, one.samples, other.samples, one.bytes, other.bytes);
+    }
+    return true;
+  }
+  let allFinite = true;
+  for (let c = 0; c < measured; c++) {
+    const channel = channelAt(c);
+    takeChannel(block + <usize>c * sampleBytes, channel.bytes, frames, sampleBytes, channels);
+    if (!decode(<Kind>sampleKind, channel.bytes, channel.samples, frames)) allFinite = false;
+  }
+  return allFinite;
 }
 
 function toCanonicalOrder(bytes: usize, size: usize): usize {
@@ -149,14 +172,6 @@ function toCanonicalOrder(bytes: usize, size: usize): usize {
   else if (bigEndian && sampleBytes > 1) swapBytes(bytes, scratch, size, sampleBytes);
   else return bytes;
   return scratch;
-}
-
-function takeChannel(channel: Channel, block: usize, index: i32, frames: usize): usize {
-  const from = block + <usize>index * sampleBytes;
-  const to = channel.bytes;
-  if (channels == 2) takeSide(from, to, frames, sampleBytes);
-  else takeEveryNth(from, to, to + frames * sampleBytes, sampleBytes, channels);
-  return to;
 }
 
 function addProducts(pair: i32, frames: i32): void {

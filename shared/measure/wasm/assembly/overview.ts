@@ -1,6 +1,6 @@
 import { granuleFrames } from './block';
 import { Channel } from './channel';
-import { highest, lowest } from './levels';
+import { blockHighest, blockLowest, highest, lowest } from './levels';
 import { columns, framesPerColumn } from './parameters';
 
 /** The picture: lowest and highest sample of every column, kept as f32 pairs. */
@@ -11,6 +11,10 @@ export function drawGranules<T extends number>(channel: Channel, frames: i32): v
       const x = <f64>load<T>(channel.samples + <usize>i * sizeof<T>());
       draw(channel, x, x, 1);
     }
+    return;
+  }
+  if (channel.columnFrames + frames < framesPerColumn) {
+    draw(channel, blockLowest, blockHighest, frames);
     return;
   }
   for (let granule = 0; granule * granuleFrames < frames; granule++) {

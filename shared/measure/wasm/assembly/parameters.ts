@@ -42,6 +42,8 @@ export let mostCycles: f64 = 0;
 export let quantisationStep: f64 = 0;
 export let fullScaleLevel: f64 = 0;
 export let deepestGrid: i32 = 0;
+/** From here on nothing can change any more. */
+export let settledGrid: i32 = 0;
 
 /** Where the list goes. */
 export function placeParameters(): usize {
@@ -87,4 +89,5 @@ export function readParameters(): void {
   quantisationStep = next();
   fullScaleLevel = next();
   deepestGrid = <i32>next();
+  settledGrid = <i32>next();
 }

@@ -1,3 +1,4 @@
+import { larger } from './extremes';
 import { edgeFrames, rampOutermost, rampQuarter } from './parameters';
 
 /** Peak of the stretch that was last looked at. */
@@ -16,7 +17,7 @@ export function isRamp<T extends number>(at: usize, direction: i32, available: f
   let peak: f64 = 0;
   for (let i = 0; i < length; i++, at += step) {
     if (i == quarter) quarterPeak = peak;
-    peak = max(peak, Math.abs(<f64>load<T>(at)));
+    peak = larger(peak, Math.abs(<f64>load<T>(at)));
   }
   if (length <= quarter) quarterPeak = peak;
   edgePeak = peak;

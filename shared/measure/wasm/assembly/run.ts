@@ -1,3 +1,4 @@
+import { larger, smaller } from './extremes';
 import { quantisationStep } from './parameters';
 
 /** Consecutive samples of about one level, and the sample in front of them. */
@@ -20,13 +21,13 @@ export function startRun(run: Run, start: f64, before: f64, level: f64): void {
 
 export function extendRun(run: Run, level: f64): void {
   run.length++;
-  run.low = min(run.low, level);
-  run.high = max(run.high, level);
+  run.low = smaller(run.low, level);
+  run.high = larger(run.high, level);
 }
 
 /** See oracle/measure-clipping.ts: steeper than any smooth peak that is as flat as this. */
 export function leavesSteeply(run: Run, after: f64): bool {
   const ratio = <f64>(run.length + 1) / <f64>(run.length - 1);
   const natural = (run.high - run.low + quantisationStep) * ratio * ratio + quantisationStep;
-  return min(run.high - run.before, run.high - after) > natural;
+  return smaller(run.high - run.before, run.high - after) > natural;
 }

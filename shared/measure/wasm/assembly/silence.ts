@@ -1,6 +1,6 @@
 import { granuleFrames } from './block';
 import { Channel } from './channel';
-import { zeros } from './levels';
+import { blockZeros, zeros } from './levels';
 import { abruptLevel, edgeFrames, longestDropout, shortestSilence } from './parameters';
 import { addPlace } from './places';
 import { isRamp } from './ramp';
@@ -12,6 +12,7 @@ import { isRamp } from './ramp';
  */
 export function findSilence<T extends number>(channel: Channel, start: f64, frames: i32): void {
   if (channel.pendingEnd >= 0) decidePending<T>(channel, start, <f64>frames);
+  if (blockZeros == 0 && !channel.inZeros) return;
   for (let first = 0; first < frames; first += granuleFrames) {
     const length = min(granuleFrames, frames - first);
     const count = load<i32>(zeros + ((<usize>(first / granuleFrames)) << 2));

@@ -1,11 +1,12 @@
 import { granuleFrames } from './block';
 import { Channel } from './channel';
-import { highest, lowest } from './levels';
+import { blockPeak, highest, lowest } from './levels';
 import { soundLevel } from './parameters';
 
 /** First and last sample above -60 dBFS. */
 
 export function findSound<T extends number>(channel: Channel, start: f64, frames: i32): void {
+  if (blockPeak <= soundLevel) return;
   const granules = (frames + granuleFrames - 1) / granuleFrames;
   if (channel.firstSound < 0) {
     for (let granule = 0; granule < granules; granule++) {

@@ -1,6 +1,7 @@
+import { larger } from './extremes';
 import { granuleFrames } from './block';
 import { Channel } from './channel';
-import { highest, lowest } from './levels';
+import { blockPeak, highest, lowest } from './levels';
 
 /**
  * True peak (ITU-R BS.1770-5, Annex 2), looked for only where it can be.
@@ -32,15 +33,17 @@ const inner = memory.data<f64>([
 ]);
 
 export function findTruePeak<T extends number>(channel: Channel, frames: i32): void {
-  let previous = channel.previousPeak;
-  let best = channel.truePeak;
   const granules = (frames + granuleFrames - 1) / granuleFrames;
-  for (let granule = 0; granule < granules; granule++) {
-    best = max(best, granulePeak(granule));
+  let previous = channel.previousPeak;
+  let best = larger(channel.truePeak, blockPeak);
+  channel.truePeak = best;
+  if (larger(previous, blockPeak) * mostGain <= best) {
+    channel.previousPeak = granulePeak(granules - 1);
+    return;
   }
   for (let granule = 0; granule < granules; granule++) {
     const own = granulePeak(granule);
-    const level = max(previous, own);
+    const level = larger(previous, own);
     previous = own;
     if (level * mostGain <= best) continue;
     const first = granule * granuleFrames;
@@ -56,7 +59,7 @@ export function findTruePeak<T extends number>(channel: Channel, frames: i32): v
 
 function granulePeak(granule: i32): f64 {
   const at = (<usize>granule) << 3;
-  return max(load<f64>(highest + at), -load<f64>(lowest + at));
+  return larger(load<f64>(highest + at), -load<f64>(lowest + at));
 }
 
 function canExceed<T extends number>(channel: Channel, first: i32, level: f64, best: f64): bool {
@@ -82,11 +85,11 @@ function largestBend<T extends number>(samples: usize): f64 {
 
 function largestLane<T extends number>(values: v128): f64 {
   if (sizeof<T>() == 8) {
-    return max(f64x2.extract_lane(values, 0), f64x2.extract_lane(values, 1));
+    return larger(f64x2.extract_lane(values, 0), f64x2.extract_lane(values, 1));
   }
-  return max(
-    max(<f64>f32x4.extract_lane(values, 0), <f64>f32x4.extract_lane(values, 1)),
-    max(<f64>f32x4.extract_lane(values, 2), <f64>f32x4.extract_lane(values, 3)),
+  return larger(
+    larger(<f64>f32x4.extract_lane(values, 0), <f64>f32x4.extract_lane(values, 1)),
+    larger(<f64>f32x4.extract_lane(values, 2), <f64>f32x4.extract_lane(values, 3)),
   );
 }
 
@@ -151,8 +154,8 @@ function interpolate<T extends number>(channel: Channel, from: i32, to: i32, bes
       innerPhase += coefficient(inner, tap) * sample;
       innerMirror += coefficient(inner, 11 - tap) * sample;
     }
-    best = max(best, max(Math.abs(outerPhase), Math.abs(outerMirror)));
-    best = max(best, max(Math.abs(innerPhase), Math.abs(innerMirror)));
+    best = larger(best, larger(Math.abs(outerPhase), Math.abs(outerMirror)));
+    best = larger(best, larger(Math.abs(innerPhase), Math.abs(innerMirror)));
   }
   return best;
 }

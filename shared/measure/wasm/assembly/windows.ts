@@ -1,3 +1,4 @@
+import { larger } from './extremes';
 import { granuleFrames } from './block';
 import { Channel } from './channel';
 import { highest, lowest, sums } from './levels';
@@ -18,40 +19,56 @@ const lowestBin: i32 = (127 - 40) << 5;
 export const floorBins: i32 = 2048;
 
 export function fillWindows(channel: Channel, frames: i32): void {
+  let windowPeak = channel.windowPeak;
+  let windowSum = channel.windowSum;
+  let windowFrames = channel.windowFrames;
+  let floorPeak = channel.floorPeak;
+  let floorFrames = channel.floorFrames;
   for (let first = 0; first < frames; first += granuleFrames) {
     const at = (<usize>(first / granuleFrames)) << 3;
     const length = min(granuleFrames, frames - first);
-    const peak = max(load<f64>(highest + at), -load<f64>(lowest + at));
-
-    channel.windowPeak = max(channel.windowPeak, peak);
-    channel.windowSum += load<f64>(sums + at);
-    channel.windowFrames += length;
-    if (channel.windowFrames == soundWindowFrames) endSoundWindow(channel);
-
-    channel.floorPeak = max(channel.floorPeak, peak);
-    channel.floorFrames += length;
-    if (channel.floorFrames == floorWindowFrames) endFloorWindow(channel);
+    const peak = larger(load<f64>(highest + at), -load<f64>(lowest + at));
+    windowPeak = larger(windowPeak, peak);
+    windowSum += load<f64>(sums + at);
+    windowFrames += length;
+    if (windowFrames == soundWindowFrames) {
+      endSoundWindow(channel, windowPeak, windowSum, windowFrames);
+      windowPeak = 0;
+      windowSum = 0;
+      windowFrames = 0;
+    }
+    floorPeak = larger(floorPeak, peak);
+    floorFrames += length;
+    if (floorFrames == floorWindowFrames) {
+      endFloorWindow(channel, floorPeak);
+      floorPeak = 0;
+      floorFrames = 0;
+    }
   }
+  channel.windowPeak = windowPeak;
+  channel.windowSum = windowSum;
+  channel.windowFrames = windowFrames;
+  channel.floorPeak = floorPeak;
+  channel.floorFrames = floorFrames;
 }
 
-export function endSoundWindow(channel: Channel): void {
-  if (channel.windowPeak > soundLevel) {
-    channel.soundingSum += channel.windowSum;
-    channel.soundingFrames += <f64>channel.windowFrames;
-  }
-  channel.windowPeak = 0;
-  channel.windowSum = 0;
-  channel.windowFrames = 0;
+/** The last window may be shorter and counts; of the floor's windows only whole ones do. */
+export function endWindows(channel: Channel): void {
+  endSoundWindow(channel, channel.windowPeak, channel.windowSum, channel.windowFrames);
 }
 
-function endFloorWindow(channel: Channel): void {
-  const bits = reinterpret<i32>(<f32>channel.floorPeak) >> binShift;
+function endSoundWindow(channel: Channel, peak: f64, sum: f64, frames: i32): void {
+  if (peak <= soundLevel) return;
+  channel.soundingSum += sum;
+  channel.soundingFrames += <f64>frames;
+}
+
+function endFloorWindow(channel: Channel, peak: f64): void {
+  const bits = reinterpret<i32>(<f32>peak) >> binShift;
   const bin = max(0, min(floorBins - 1, bits - lowestBin));
   const at = channel.floorHistogram + ((<usize>bin) << 2);
   store<u32>(at, load<u32>(at) + 1);
   channel.floorWindows += 1;
-  channel.floorPeak = 0;
-  channel.floorFrames = 0;
 }
 
 /** The level below which a tenth of the windows stay, to the lower end of its bin. */
@@ -71,6 +88,6 @@ export function followTail<T extends number>(channel: Channel, start: f64, frame
   const tailStart = fileFrames - tailFrames - start;
   for (let i = <i32>Math.max(0, Math.min(tailStart, <f64>frames)); i < frames; i++) {
     const sample = <f64>load<T>(channel.samples + <usize>i * sizeof<T>());
-    channel.tailPeak = max(channel.tailPeak, Math.abs(sample));
+    channel.tailPeak = larger(channel.tailPeak, Math.abs(sample));
   }
 }
