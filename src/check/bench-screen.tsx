@@ -49,6 +49,13 @@ export function BenchScreen({ rules, edition, projectId }: BenchScreenProps) {
       )}
       {state.phase === 'waiting' ? (
         <Intake onFolder={bench.drop} onFailure={bench.fail}>
+          <p className="text-small text-ink-2">
+            No session at hand?{' '}
+            <button type="button" className="text-link" onClick={() => void bench.dropSample()}>
+              Try it with a sample
+            </button>
+            : fourteen faulty little files, made on the spot.
+          </p>
           <div className="w-full max-w-2xl border-t border-line pt-5">
             <SongFields information={state.information} onChange={bench.setInformation} />
           </div>

@@ -16,8 +16,11 @@ import {
 import type { DroppedFolder } from '../browser/dropped-files.ts';
 import { fileOnDisk } from '../browser/file-source.ts';
 import { loadMeters } from '../browser/load-meters.ts';
+import { WorkerLink } from '../workers/bridge.ts';
 import { createMeasurePool, type MeasurePool } from '../workers/measure-pool.ts';
+import { sampleSong } from './sample-session/sample-song.ts';
 import { openSessionWorker, type SessionWorker } from '../workers/session-link.ts';
+import type { SampleApi } from '../workers/sample-api.ts';
 import type { FileToRead } from '../workers/session-api.ts';
 
 /** Every finding of a check, whatever it is about. */
@@ -87,6 +90,27 @@ export class Bench {
   /** Checks a dropped folder; what was on the bench before is put away. */
   readonly drop = (folder: DroppedFolder): void => {
     void this.run(folder);
+  };
+
+  /** Makes the sample session in a worker and checks it like any other folder. */
+  readonly dropSample = async (): Promise<void> => {
+    const link = new WorkerLink<SampleApi>(
+      new Worker(new URL('../workers/sample.worker.ts', import.meta.url), { type: 'module' }),
+    );
+    const { artist, title, bpm } = sampleSong;
+    this.set({
+      ...waiting,
+      phase: 'measuring',
+      information: { ...waiting.information, artist, title, tempo: { kind: 'fixed', bpm } },
+    });
+    try {
+      const files = await link.call('make', null);
+      await this.run({ folderName: title, files });
+    } catch (failure) {
+      this.set({ ...waiting, failure });
+    } finally {
+      link.close();
+    }
   };
 
   /** Stops at once and clears the bench. */
