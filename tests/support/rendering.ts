@@ -1,10 +1,13 @@
+import { execFile } from 'node:child_process';
 import { writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
+import { promisify } from 'node:util';
 import { bytesSource, type ByteSource, type DroppedFile } from '#shared/bytes/byte-source.ts';
 import { renderEntry } from '#shared/repair/render-entry.ts';
 import type { Operation, PlannedEntry } from '#shared/repair/repair-plan.ts';
 import { readWave } from '#shared/wave/read-wave.ts';
-import { runForBytes } from './outside-programs.ts';
+
+const execute = promisify(execFile);
 
 /** A dropped file whose bytes are in memory, streamed in blocks of `blockBytes`. */
 export function droppedBytes(path: string, bytes: Uint8Array, blockBytes = 1 << 20): DroppedFile {
@@ -64,15 +67,8 @@ export async function soxSamples(
   effects: readonly string[] = [],
   combine: readonly string[] = [],
 ): Promise<Float64Array> {
-  const bytes = await runForBytes('sox', [
-    '-D',
-    ...combine,
-    ...inputs,
-    '-t',
-    'f64',
-    '-',
-    ...effects,
-  ]);
+  const args = ['-D', ...combine, ...inputs, '-t', 'f64', '-', ...effects];
+  const { stdout: bytes } = await execute('sox', args, { maxBuffer: 1 << 28, encoding: 'buffer' });
   return new Float64Array(bytes.buffer.slice(bytes.byteOffset, bytes.byteOffset + bytes.length));
 }
 
