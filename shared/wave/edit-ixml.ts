@@ -1,6 +1,6 @@
 import { tellsPersonalText, withoutPersonalText } from './personal-text.ts';
 import { parseIxml } from './read-ixml.ts';
-import type { XmlElement } from './scan-xml.ts';
+import { xmlText, type XmlElement } from './scan-xml.ts';
 import type { ChunkChange } from './travelling-chunks.ts';
 import { ascii } from './write-wave-header.ts';
 
@@ -21,12 +21,14 @@ export function editIxml(bytes: Uint8Array, change: ChunkChange): Uint8Array | n
   const document = parseIxml(bytes);
   if (!document) return null;
   const { text, elements } = document;
+  const rate = elements.find(({ path }) => path === 'BWFXML/SPEED/TIMESTAMP_SAMPLE_RATE');
+  const ownRate = rate && Number(xmlText(text, rate)) !== change.sampleRateHz;
   let edited = '';
   let copiedTo = 0;
   for (const element of elements) {
     if (element.start < copiedTo) continue;
     const inner = text.slice(element.innerStart, element.innerEnd);
-    const [from, to, replacement] = editElement(element, inner, change);
+    const [from, to, replacement] = editElement(element, inner, change, ownRate === true);
     if (from < copiedTo) continue;
     edited += text.slice(copiedTo, from) + replacement;
     copiedTo = to;
@@ -43,6 +45,7 @@ function editElement(
   element: XmlElement,
   inner: string,
   change: ChunkChange,
+  ownRate: boolean,
 ): [from: number, to: number, replacement: string] {
   const { path, start, end, innerStart, innerEnd } = element;
   const unchanged: [number, number, string] = [start, start, ''];
@@ -53,6 +56,9 @@ function editElement(
   if (change.channelsChanged && path === 'BWFXML/TRACK_LIST') return cut;
   if (change.moveByFrames !== 0 && path === 'BWFXML/SYNC_POINT_LIST') return cut;
   if (element.hasChildren) return unchanged;
+  // A time counted at another rate than the file's cannot be moved by frames of the file.
+  if (ownRate && change.timeReferenceFrames !== null && path.includes('/TIMESTAMP_SAMPLES'))
+    return cut;
   const stamp = timeWord(path, change.timeReferenceFrames);
   if (stamp !== null && inner.trim() !== '') return [innerStart, innerEnd, String(stamp)];
   return [innerStart, innerEnd, withoutPersonalText(inner)];

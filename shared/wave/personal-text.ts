@@ -9,9 +9,14 @@ const pathStart =
   '\\\\\\\\[\\w.-]{2,64}\\\\[\\w$ .-]{2,64}';
 const address = '[\\w.+-]{2,64}@[\\w-]{2,64}(?:\\.[A-Za-z]{2,12})+';
 
+/** In plain text any absolute path counts; between other bytes that would match by chance. */
+const textPathStart =
+  `${pathStart}|(?<![A-Za-z])[A-Za-z]:[\\\\/](?=[^\\\\/\\s])|` +
+  `(?<![^\\s"'=>(,;])\\/[\\w.-][^\\x00-\\x1f"<>|*?\\/]{0,63}\\/(?=[^\\s/])`;
+
 const personal = new RegExp(`${pathStart}|${address}`);
 const wholePath = new RegExp(
-  `(?:${pathStart})(?:[^\\x00-\\x1f"<>|*?]*[\\\\/](?=[^\\\\/]))?[^\\x00-\\x1f"<>|*?\\\\/]*[\\\\/]?`,
+  `(?:${textPathStart})(?:[^\\x00-\\x1f"<>|*?]*[\\\\/](?=[^\\\\/]))?[^\\x00-\\x1f"<>|*?\\\\/]*[\\\\/]?`,
   'g',
 );
 const wholeAddress = new RegExp(address, 'g');

@@ -14,8 +14,7 @@ import {
   type WaveEnvelope,
 } from './write-wave-header.ts';
 
-/** A larger chunk does not travel once the header is written anew, nor more than this in all. */
-const maxChunkBytes = 4 * 1024 * 1024;
+/** Metadata beyond this, in all, does not travel: it is held in memory. */
 const maxMetadataBytes = 16 * 1024 * 1024;
 
 export type TrackReading = Extract<WaveReading, { kind: 'track' }>;
@@ -60,19 +59,21 @@ export async function rewriteHeader(
     dataBytes !== reading.layout.dataBytes ||
     !sameSamples(format, reading.format);
   const stamp = reading.format.timeReferenceFrames;
+  const wantedStamp =
+    stamp === null ? null : (rewrite.timeReferenceFrames ?? Math.max(0, stamp - moveByFrames));
+  const sameStamp = wantedStamp === stamp;
   const change: ChunkChange = {
     audioChanged,
     channelsChanged,
     moveByFrames,
     frames: format.frames,
-    timeReferenceFrames:
-      stamp === null ? null : (rewrite.timeReferenceFrames ?? Math.max(0, stamp - moveByFrames)),
+    timeReferenceFrames: sameStamp ? null : wantedStamp,
+    sampleRateHz: reading.format.sampleRateHz,
     droppedCues: new Set(),
   };
 
   if (!isWave(reading.format)) return { ...newEnvelope(rewrite, change), unchanged: false };
   const metadata = await readMetadata(reader, reading.layout.chunks);
-  const sameStamp = change.timeReferenceFrames === stamp;
   if (!audioChanged && sameStamp && isFitToTravel(metadata, change)) {
     const copy = await copyEnvelope(reader, reading);
     if (copy) return { ...copy, unchanged: true };
@@ -89,7 +90,7 @@ function sameSamples(a: TrackFormat, b: TrackFormat): boolean {
   );
 }
 
-/** A chunk of the source; contents are null where it is too large to be carried about. */
+/** A chunk of the source; contents are null where it is not carried over. */
 type SourceChunk = { id: string; place: ChunkPlace; bytes: Uint8Array | null };
 
 /** Chunks that are written anew from the format, not carried over. */
@@ -103,10 +104,10 @@ async function readMetadata(
   let left = maxMetadataBytes;
   for (const place of places) {
     const { id, contentOffset, contentBytes } = place;
-    const carried = !structuralIds.has(id) && contentBytes <= Math.min(maxChunkBytes, left);
+    const carried = !structuralIds.has(id) && contentBytes <= left;
     // A copy: the reader's window moves on.
     const bytes = carried
-      ? new Uint8Array(await reader.readUpTo(contentOffset, contentBytes, maxChunkBytes))
+      ? new Uint8Array(await reader.readUpTo(contentOffset, contentBytes, contentBytes))
       : null;
     left -= bytes?.length ?? 0;
     chunks.push({ id, place, bytes });

@@ -13,8 +13,10 @@ export type ChunkChange = {
   moveByFrames: number;
   /** Frames of the output. */
   frames: number;
-  /** Frames since midnight the output begins at; null where no chunk of the source says so. */
+  /** Frames since midnight the output begins at; null where the source's time stands, or has none. */
   timeReferenceFrames: number | null;
+  /** The rate that time is counted at. */
+  sampleRateHz: number;
   /** Cue points that are cut off, by id: their labels go with them. */
   droppedCues: ReadonlySet<number>;
 };

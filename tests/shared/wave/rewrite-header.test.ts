@@ -230,6 +230,20 @@ describe('a moved file', () => {
     expect((await readTrack(bytes)).format.timeReferenceFrames).toBe(48_000);
   });
 
+  it('a time counted at another rate is taken out, not moved wrongly', async () => {
+    const list = ixmlChunk(
+      '<SPEED><TIMESTAMP_SAMPLE_RATE>44100</TIMESTAMP_SAMPLE_RATE>' +
+        '<TIMESTAMP_SAMPLES_SINCE_MIDNIGHT_LO>77</TIMESTAMP_SAMPLES_SINCE_MIDNIGHT_LO></SPEED>',
+    );
+    const bext = bextChunk({ timeReference: 500n });
+    const bytes = writeTestWave({ ...mono24, before: [bext, list] });
+    const moved = await rewrite(bytes, { moveByFrames: 10 });
+    expect(moved.bytes.includes('SINCE_MIDNIGHT')).toBe(false);
+    expect((await readTrack(moved.bytes)).format.timeReferenceFrames).toBe(490);
+    const still = await rewrite(bytes, { audioChanged: true });
+    expect(still.bytes.includes('SINCE_MIDNIGHT_LO>77<')).toBe(true);
+  });
+
   it('never begins before midnight', async () => {
     const early = writeTestWave({ ...mono24, before: [bextChunk({ timeReference: 5n })] });
     const { bytes } = await rewrite(early, { moveByFrames: 10 });
