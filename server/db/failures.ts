@@ -19,7 +19,6 @@ const awayCodes = new Set([
   'ECONNRESET',
   'EHOSTUNREACH',
   'ENETUNREACH',
-  'ENOENT',
   'ENOTFOUND',
   'EAI_AGAIN',
   'EPIPE',
@@ -33,8 +32,11 @@ function driverError(error: unknown): Record<string, unknown> | null {
 
 /** Whether the connection could not be made, or broke while it was used. */
 export function isConnectionLost(error: unknown): boolean {
-  const code = driverError(error)?.code;
-  return typeof code === 'string' && (awayCodes.has(code) || lostSqlStates.test(code));
+  const { code, syscall } = driverError(error) ?? {};
+  if (typeof code !== 'string') return false;
+  // The socket of a local server that is not running is a missing file.
+  if (code === 'ENOENT') return syscall === 'connect';
+  return awayCodes.has(code) || lostSqlStates.test(code);
 }
 
 /** Whether the database cannot help now, so that trying again later is right. */

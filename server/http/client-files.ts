@@ -4,7 +4,7 @@ import express, { Router } from 'express';
 /**
  * Serves the built client. Files in `assets/` carry a hash of their content in their name and
  * are kept by browsers for good; everything else is asked for again each time. Any other
- * address without a file extension is a page of the client: it gets `index.html`.
+ * address without a dot in its last part is a page of the client: it gets `index.html`.
  */
 export function clientFiles(clientDir: string): Router {
   const root = path.resolve(clientDir);
@@ -26,7 +26,7 @@ export function clientFiles(clientDir: string): Router {
     }),
   );
   router.get('/{*page}', (request, response, next) => {
-    if (path.extname(request.path) !== '') {
+    if (path.basename(request.path).includes('.')) {
       next();
       return;
     }

@@ -53,6 +53,7 @@ function toAppError(error: unknown): AppError {
   if (isDatabaseAway(error)) return new AppError('unavailable');
   const { type, status, limit } = (error ?? {}) as Record<string, unknown>;
   if (type === 'entity.too.large') return new AppError('too-large', { limitBytes: limit });
+  if (status === 404) return new AppError('not-found');
   if (typeof status === 'number' && status >= 400 && status < 500) {
     // Malformed JSON, an unknown charset or encoding, an address that cannot be decoded.
     return new AppError('invalid-request', {
