@@ -33,8 +33,10 @@ const take = (code: string, repair: RepairKind) => (findings: readonly Finding[]
 
 /** A clean session in which `files` stand in for the organ. */
 function sessionWith(files: Record<string, Buffer>): Record<string, Buffer> {
-  const { 'Organ.wav': _organ, ...rest } = cleanSession();
-  return { ...rest, ...files };
+  const session = { ...cleanSession(), ...files };
+  return Object.fromEntries(
+    Object.entries(session).filter(([path]) => path !== 'Organ.wav' || path in files),
+  );
 }
 
 type Case = {
