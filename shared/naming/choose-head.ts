@@ -93,9 +93,11 @@ export function chooseHead(words: readonly Word[], hint: GroupNature | null): He
   if (!instrument) return null;
   if (instrument.general) {
     const general = instrument;
+    // A voice is sung by somebody, whatever else is said; other groups are only headings.
+    const heading = general.nature !== 'vocals';
     const narrower = hits.find(
       (hit) =>
-        hit.standing === 'unsure' &&
+        (hit.standing === 'unsure' || heading) &&
         hit.instrument.nature === general.nature &&
         !hit.instrument.general,
     );
@@ -105,9 +107,7 @@ export function chooseHead(words: readonly Word[], hint: GroupNature | null): He
   const own = hits.filter(
     (hit) =>
       hit.instrument === chosen ||
-      (hit.instrument.general &&
-        hit.instrument.nature === chosen.nature &&
-        hit.instrument.detail === null),
+      (hit.instrument.general && hit.instrument.nature === chosen.nature),
   );
   const borrowed = hits.some(
     (hit) =>

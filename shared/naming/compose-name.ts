@@ -1,4 +1,4 @@
-import type { InstrumentGroup, NamingRules } from '../rules/naming-rules.ts';
+import type { InstrumentGroup, NameToken, NamingRules } from '../rules/naming-rules.ts';
 import { plainLetter } from './fold-name.ts';
 import type { Side } from './parsed-name.ts';
 import { nameRuns } from './split-name.ts';
@@ -57,34 +57,57 @@ export function inCase(word: string, naming: NamingRules): string {
   }
 }
 
+const written = new WeakMap<NamingRules, Map<string, readonly string[]>>();
+const mostWritten = 5000;
+
+/** The words of a text as they stand in a name. The same few texts recur in every name. */
+function writeWords(text: string, naming: NamingRules): readonly string[] {
+  let known = written.get(naming);
+  if (!known) written.set(naming, (known = new Map<string, readonly string[]>()));
+  let words = known.get(text);
+  if (!words) {
+    words = wordsOf(text, naming).map((word) => inCase(word, naming).normalize('NFC'));
+    if (known.size >= mostWritten) known.clear();
+    known.set(text, words);
+  }
+  return words;
+}
+
+/** A name, and the same without its running number: what it says of the part. */
+export type ComposedName = { name: string; body: string };
+
 /**
  * Writes a name under a convention, without extension. Where the convention has no place for a
  * side it stands with the details, and where it has none for details, with the instrument.
  */
-export function composeName(parts: NameParts, naming: NamingRules): string {
-  const { tokens } = naming;
-  const details = [...parts.details];
-  const instrument = [parts.instrument, parts.ordinal === null ? '' : String(parts.ordinal)];
-  if (!tokens.includes('side')) {
-    (tokens.includes('detail') ? details : instrument).push(sideText(parts.side));
-  }
-  const texts = tokens.flatMap((token): string[] => {
-    switch (token) {
-      case 'number':
-        return parts.number === null ? [] : [padNumber(parts.number, naming)];
-      case 'group':
-        return parts.group ? [groupText(parts.group, naming)] : [];
-      case 'instrument':
-        return instrument;
-      case 'detail':
-        return details;
-      case 'side':
-        return [sideText(parts.side)];
+export function composeName(parts: NameParts, naming: NamingRules): ComposedName {
+  const { tokens, separator } = naming;
+  const name: string[] = [];
+  const body: string[] = [];
+  const add = (text: string) => {
+    for (const word of writeWords(text, naming)) {
+      name.push(word);
+      body.push(word);
     }
-  });
-  return texts
-    .flatMap((text) => wordsOf(text, naming))
-    .map((word) => inCase(word, naming))
-    .join(naming.separator)
-    .normalize('NFC');
+  };
+  const sidePlace = sidePlaceOf(tokens);
+  for (const token of tokens) {
+    if (token === 'number') {
+      if (parts.number !== null) name.push(padNumber(parts.number, naming));
+    } else if (token === 'group') {
+      if (parts.group) add(groupText(parts.group, naming));
+    } else if (token === 'instrument') {
+      add(parts.instrument);
+      if (parts.ordinal !== null) add(String(parts.ordinal));
+    } else if (token === 'detail') {
+      for (const detail of parts.details) add(detail);
+    }
+    if (token === sidePlace) add(sideText(parts.side));
+  }
+  return { name: name.join(separator), body: body.join(separator) };
+}
+
+function sidePlaceOf(tokens: readonly NameToken[]): NameToken {
+  if (tokens.includes('side')) return 'side';
+  return tokens.includes('detail') ? 'detail' : 'instrument';
 }

@@ -11,21 +11,30 @@ const before = '(?<![\\p{L}\\p{N}])';
 const after = '(?![\\p{L}\\p{N}])';
 
 /** In the order in which they are looked for; what one took, the next does not see. */
-const patterns: readonly { kind: LeftoverKind; pattern: RegExp; counts?: true }[] = [
+const patterns: readonly {
+  kind: LeftoverKind;
+  pattern: RegExp;
+  counts?: true;
+  /** Cheap to ask, and false for most names. */
+  when: RegExp;
+}[] = [
   {
     kind: 'date',
+    when: /(?:19|20)\d\d/,
     pattern:
       /(?<!\d)(?:19|20)\d\d[-_. ]?(?:0[1-9]|1[0-2])[-_. ]?(?:0[1-9]|[12]\d|3[01])(?:[T_ -]+\d\d[-.:h]?\d\d(?:[-.:]?\d\d)?)?(?!\d)/gu,
   },
   {
     kind: 'date',
+    when: /(?:19|20)\d\d/,
     pattern:
       /(?<!\d)(?:0?[1-9]|[12]\d|3[01])[-_.](?:0?[1-9]|[12]\d|3[01])[-_.](?:19|20)\d\d(?!\d)/gu,
   },
-  { kind: 'tempo', pattern: /(?<!\d)\d{2,3}(?:[.,]\d{1,3})?[ _-]*bpm(?!\p{L})/giu },
-  { kind: 'tempo', pattern: /(?<!\p{L})bpm[ _=-]*\d{2,3}(?:[.,]\d{1,3})?(?!\d)/giu },
+  { kind: 'tempo', when: /bpm/i, pattern: /(?<!\d)\d{2,3}(?:[.,]\d{1,3})?[ _-]*bpm(?!\p{L})/giu },
+  { kind: 'tempo', when: /bpm/i, pattern: /(?<!\p{L})bpm[ _=-]*\d{2,3}(?:[.,]\d{1,3})?(?!\d)/giu },
   {
     kind: 'format',
+    when: /16|24|32|44|48|88|96|176|192/,
     pattern: new RegExp(
       `${before}${rate} ?k(?:hz)?(?:[ _./-]*${bits} ?(?:bits?|b|fp?|float)?)?${after}`,
       'giu',
@@ -33,6 +42,7 @@ const patterns: readonly { kind: LeftoverKind; pattern: RegExp; counts?: true }[
   },
   {
     kind: 'format',
+    when: /16|24|32|44|48|88|96|176|192/,
     pattern: new RegExp(
       `${before}${bits}[ _-]?(?:bits?|b|float|fp)(?:[ _./-]*(?:float|${rate} ?(?:k(?:hz)?)?))?${after}`,
       'giu',
@@ -40,6 +50,7 @@ const patterns: readonly { kind: LeftoverKind; pattern: RegExp; counts?: true }[
   },
   {
     kind: 'format',
+    when: /16|24|32|44|48|88|96|176|192/,
     pattern: new RegExp(
       `${before}(?:${bits}[_./x-]?${rate}|${rate}[_./x-]?${bits})${after}`,
       'giu',
@@ -47,21 +58,23 @@ const patterns: readonly { kind: LeftoverKind; pattern: RegExp; counts?: true }[
   },
   {
     kind: 'key',
+    when: /maj|min|dur|moll/,
     pattern: /(?<![\p{L}\p{N}])[A-G][#♯b♭]?[ _-]?(?:maj|min|major|minor|dur|moll)(?!\p{L})/gu,
   },
-  { kind: 'key', pattern: /(?<![\p{L}\p{N}])[A-G][#♯]m?(?![\p{L}\p{N}])/gu },
+  { kind: 'key', when: /[#♯]/, pattern: /(?<![\p{L}\p{N}])[A-G][#♯]m?(?![\p{L}\p{N}])/gu },
   {
     kind: 'version',
+    when: /v/i,
     pattern: /(?<![\p{L}\p{N}])v(?:er(?:sion)?)?[ ._-]?\d{1,3}(?:\.\d{1,2})?(?![\p{L}\p{N}])/giu,
   },
-  { kind: 'counter', pattern: /[([{] ?(\d{1,3}) ?[)\]}]/gu, counts: true },
+  { kind: 'counter', when: /[)\]}]/, pattern: /[([{] ?(\d{1,3}) ?[)\]}]/gu, counts: true },
 ];
 
 /** What programs and habits write into a name besides words. Offsets in the bare name. */
 export function findExportMarks(name: string): ExportMark[] {
   const marks: ExportMark[] = [];
-  if (!/\d|[#♯]|maj|min|dur|moll/i.test(name)) return marks;
-  for (const { kind, pattern, counts } of patterns) {
+  for (const { kind, pattern, counts, when } of patterns) {
+    if (!when.test(name)) continue;
     for (const match of name.matchAll(pattern)) {
       const start = match.index;
       const end = start + match[0].length;

@@ -11,6 +11,7 @@ export type Part = {
   /** Position in the session. */
   index: number;
   entry: Instrument;
+  /** How it is written: as the vocabulary does, or as names do that stay as they are. */
   instrument: string;
   group: InstrumentGroup | null;
   /** Position of the group in the naming table. */
@@ -52,7 +53,7 @@ export function partsOf(
 ): Part | null {
   const { parsed } = file;
   const entry = parsed.instrument === null ? null : lexicon.find(parsed.instrument);
-  if (!entry || parsed.instrument === null) return null;
+  if (!entry) return null;
   const group = lexicon.groupOf(entry);
   if (!group && naming.tokens.includes('group')) return null;
   const known = [...parsed.detail].sort((a, b) => detailRank(a) - detailRank(b));
@@ -61,7 +62,7 @@ export function partsOf(
     file,
     index,
     entry,
-    instrument: parsed.instrument,
+    instrument: entry.written,
     group,
     groupRank: group ? naming.groups.indexOf(group) : naming.groups.length,
     ordinal: parsed.ordinal,
@@ -108,6 +109,7 @@ function shortDetail(detail: string): string {
  */
 export function* shorterParts(part: Part): Generator<Part> {
   yield part;
+  if (part.instrument !== part.entry.written) yield { ...part, instrument: part.entry.written };
   const known = part.details.length - part.freeWords;
   for (let count = part.details.length - 1; count >= known; count--) {
     yield { ...part, details: part.details.slice(0, count) };

@@ -56,12 +56,17 @@ function read(
   reading: Reading,
   group: GroupCandidate | null,
 ): { words: Word[]; marks: ExportMark[] } {
-  const masks = group ? [...reading.marks, group.range] : [...reading.marks];
+  const range = group?.range;
+  // `V 2 Pluck` has a group and a number in front, no second version.
+  const own = range
+    ? reading.marks.filter((mark) => mark.start >= range.end || mark.end <= range.start)
+    : [...reading.marks];
+  const masks = range ? [...own, range] : own;
   const first = readWords(reading.name, reading.lexicon.tries, masks);
   const songMarks = findSongWords(first.text, reading.song);
-  if (songMarks.length === 0) return { words: first.words, marks: [...reading.marks] };
+  if (songMarks.length === 0) return { words: first.words, marks: own };
   const again = readWords(reading.name, reading.lexicon.tries, [...masks, ...songMarks]);
-  return { words: again.words, marks: [...reading.marks, ...songMarks] };
+  return { words: again.words, marks: [...own, ...songMarks] };
 }
 
 function resolve(reading: Reading, group: GroupCandidate | null, frame: NameFrame): ParsedName {

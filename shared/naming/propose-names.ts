@@ -3,7 +3,7 @@ import type { FileRole, SessionInformation } from '../session/session-informatio
 import { composeName } from './compose-name.ts';
 import { examineName, explainName } from './explain-name.ts';
 import { clashKey, foldName } from './fold-name.ts';
-import { lexiconOf } from './lexicon.ts';
+import { lexiconOf, type Instrument } from './lexicon.ts';
 import { compareParts, partsOf, shorterParts, type Part } from './name-parts.ts';
 import { parseName } from './parse-name.ts';
 import type { ParsedName } from './parsed-name.ts';
@@ -75,19 +75,18 @@ class NameGiver {
 
   /** The longest way to write a part that follows the convention, reads back and is free. */
   give(part: Part, number: number | null): string | null {
-    let taken = false;
     for (const shorter of shorterParts(part)) {
       const given = this.tryName(shorter, part, number);
-      if (given === 'taken') taken = true;
-      else if (given !== null) return given.name;
+      if (given !== null && given !== 'taken') return given.name;
     }
-    return taken ? this.giveOrdinal(part, number) : null;
+    return this.giveOrdinal(part, number);
   }
 
-  /** Shortened names can meet; then the later one is counted on. */
+  /** Shortened names can meet, and 808 is no number to everybody: then counting goes on. */
   private giveOrdinal(part: Part, number: number | null): string | null {
     for (const shorter of shorterParts(part)) {
-      const key = clashKey(composeName({ ...shorter, number: null, ordinal: null }, this.naming));
+      const uncounted = { ...shorter, number: null, ordinal: null };
+      const key = clashKey(composeName(uncounted, this.naming).body);
       for (let ordinal = (this.ordinals.get(key) ?? 0) + 1; ; ordinal++) {
         const given = this.tryName({ ...shorter, ordinal }, part, number);
         if (given === 'taken') continue;
@@ -104,9 +103,8 @@ class NameGiver {
     part: Part,
     number: number | null,
   ): { name: string } | 'taken' | null {
-    const name = composeName({ ...shorter, number }, this.naming);
+    const { name, body } = composeName({ ...shorter, number }, this.naming);
     if ([...name].length > this.naming.maximumLength) return null;
-    const body = composeName({ ...shorter, number: null }, this.naming);
     if (!this.isFree(name, body)) return 'taken';
     if (!this.readsBack(name, part)) return null;
     this.reserve(name, body);
@@ -117,7 +115,7 @@ class NameGiver {
     if (checkPortability(name).length > 0) return false;
     const { parsed, failures } = examineName(name, this.naming);
     return (
-      failures.length === 0 && parsed.instrument === part.instrument && parsed.side === part.side
+      failures.length === 0 && parsed.instrument === part.entry.written && parsed.side === part.side
     );
   }
 }
@@ -141,6 +139,16 @@ function namesToKeep(parts: readonly Part[], naming: NamingRules): Map<Part, str
   // Where most files have to be renamed, they are numbered anew in the order of the groups.
   const numbered = naming.tokens.includes('number');
   return numbered && kept.size * 2 < parts.length ? new Map<Part, string>() : kept;
+}
+
+/** How names that stay write an instrument, so that its other files are called alike. */
+function ownWritings(kept: ReadonlyMap<Part, string>): Map<Instrument, string> {
+  const writings = new Map<Instrument, string>();
+  for (const { entry, file } of kept.keys()) {
+    const [span, second] = file.parsed.spans.filter(({ kind }) => kind === 'instrument');
+    if (span && !second && !writings.has(entry)) writings.set(entry, span.text);
+  }
+  return writings;
 }
 
 /** The next running number that no name uses yet; after the highest where some are kept. */
@@ -199,15 +207,20 @@ export function proposeNames(
     proposals.set(part.file.path, name);
     if (part.file.parsed.number !== null) usedNumbers.add(part.file.parsed.number);
   }
-  const open = parts.filter((part) => proposals.get(part.file.path) === null);
+  const writings = ownWritings(kept);
+  const open = parts
+    .filter((part) => proposals.get(part.file.path) === null)
+    .map((part) => ({ ...part, instrument: writings.get(part.entry) ?? part.instrument }));
   const isFree = (part: Part) => {
-    const body = composeName({ ...part, number: null }, naming);
+    const { body } = composeName({ ...part, number: null }, naming);
     return giver.isFree(body, body);
   };
   const after = kept.size > 0 ? Math.max(0, ...usedNumbers) : 0;
   const nextNumber = numberSource(naming, usedNumbers, after);
   for (const part of tellApart(open, naming, isFree)) {
-    proposals.set(part.file.path, giver.give(part, nextNumber()));
+    const name = giver.give(part, nextNumber());
+    const another = name === null && naming.tokens.includes('number');
+    proposals.set(part.file.path, another ? giver.give(part, nextNumber()) : name);
   }
   return proposals;
 }

@@ -20,7 +20,7 @@ export type ResolveContext = {
 
 /** Ordinals above this are something else: a model of microphone, a year. */
 const highestOrdinal = 32;
-const highestNumber = 999;
+const highestNumber = 9999;
 
 type RoleChoice = { role: FileRole; sure: boolean };
 
@@ -227,9 +227,11 @@ class NameReader {
     const describing = instrumentMeanings(word).find((m) => m.instrument.detail !== null);
     const leftover = word.meanings.find((m) => m.kind === 'leftover');
     if (side && this.readSide(word, side.side, index)) return true;
-    if (describing?.instrument.detail) this.addDetail(describing.instrument.detail, word);
-    else if (detail) this.addDetail(detail.detail.written, word);
-    else if (this.readTake(word, index)) return true;
+    if (detail) this.addDetail(detail.detail.written, word);
+    else if (describing?.instrument.detail) {
+      if (describing.standing === 'unsure') this.guessed = true;
+      this.addDetail(describing.instrument.detail, word);
+    } else if (this.readTake(word, index)) return true;
     else if (this.readRoman(word)) return true;
     else if (leftover) this.leftOver(leftover.leftover, word);
     else return false;

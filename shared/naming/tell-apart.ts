@@ -4,7 +4,7 @@ import { clashKey } from './fold-name.ts';
 import type { Part } from './name-parts.ts';
 
 function bodyOf(part: Part, naming: NamingRules): string {
-  return clashKey(composeName({ ...part, number: null }, naming));
+  return clashKey(composeName({ ...part, number: null }, naming).body);
 }
 
 function buckets(parts: readonly Part[], naming: NamingRules): Part[][] {
@@ -93,12 +93,14 @@ function numbered(
   if (part.ordinal !== null && free(part)) return part;
   const alternative = part.ordinal !== null && naming.tokens.includes('detail');
   const key = bodyOf(alternative ? part : { ...part, ordinal: null }, naming);
-  for (let count = (counted.get(key) ?? 0) + 1; ; count++) {
+  // Beside one that is called so already, the next is the second.
+  const first = alternative || free({ ...part, ordinal: null }) ? 1 : 2;
+  for (let count = counted.get(key) ?? first; ; count++) {
     const other = alternative
       ? withDetail(part, count === 1 ? 'Alt' : `Alt ${count}`)
       : { ...part, ordinal: count };
     if (!free(other)) continue;
-    counted.set(key, count);
+    counted.set(key, count + 1);
     return other;
   }
 }

@@ -67,7 +67,9 @@ export const houseRulesSchema = z.strictObject({
   confirm: z
     .array(
       z.strictObject({
-        id: z.string().regex(/^[a-z0-9-]{1,40}$/),
+        id: z
+          .string()
+          .regex(/^[a-z0-9-]{1,40}$/, 'must be small letters, digits and hyphens, 40 at most'),
         text: z.string().min(1).max(300),
       }),
     )

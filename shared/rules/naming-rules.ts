@@ -22,12 +22,17 @@ export const groupNatures = [
 export type GroupNature = (typeof groupNatures)[number];
 
 export const instrumentGroupSchema = z.strictObject({
-  id: z.string().regex(/^[a-z0-9-]{1,40}$/),
+  id: z
+    .string()
+    .regex(/^[a-z0-9-]{1,40}$/, 'must be small letters, digits and hyphens, 40 at most'),
   nature: z.enum(groupNatures),
   /** Stands for the group in a name: `D`. Letters and digits, so that it is one word of a name. */
-  letter: z.string().regex(/^[\p{L}\p{N}]{1,4}$/u),
+  letter: z.string().regex(/^[\p{L}\p{N}]{1,4}$/u, 'must be one to four letters or digits'),
   /** Whole word: `Drums`. */
-  label: z.string().min(1).max(40),
+  label: z
+    .string()
+    .max(40)
+    .regex(/[\p{L}\p{N}]/u, 'must have a letter or a digit'),
   /** Position in the palette, 0 to 11; the interface chooses the colours. */
   colour: z.number().int().min(0).max(11),
   /** Words of the engineer's own that belong here, beside the vocabulary's. */
@@ -42,7 +47,7 @@ export const namingSchema = z.strictObject({
     .min(1)
     .max(nameTokens.length)
     .refine((tokens) => tokens.includes('instrument') && new Set(tokens).size === tokens.length, {
-      message: 'every token at most once, and the instrument always',
+      message: 'must have every token at most once, and the instrument always',
     }),
   separator: z.enum([' ', '_', '-', '.']),
   case: z.enum(['title', 'upper', 'lower', 'as-is']),

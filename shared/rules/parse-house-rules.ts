@@ -1,4 +1,5 @@
 import type { z } from 'zod';
+import { groupText, wordsOf } from '../naming/compose-name.ts';
 import { houseRulesSchema, houseRulesSchemaVersion, type HouseRules } from './house-rules.ts';
 import { namingClashes } from './naming-clashes.ts';
 
@@ -36,8 +37,10 @@ function amount(issue: { origin: string }, limit: number | bigint, most: boolean
 function describe(issue: z.core.$ZodIssue): RulesIssue[] {
   const path = place(issue.path);
   switch (issue.code) {
-    case 'invalid_type':
-      return [{ path, message: `must be ${kinds[issue.expected] ?? issue.expected}` }];
+    case 'invalid_type': {
+      const missing = issue.input === undefined ? 'is missing and ' : '';
+      return [{ path, message: `${missing}must be ${kinds[issue.expected] ?? issue.expected}` }];
+    }
     case 'too_big':
       return [{ path, message: amount(issue, issue.maximum, true) }];
     case 'too_small':
@@ -48,7 +51,7 @@ function describe(issue: z.core.$ZodIssue): RulesIssue[] {
         path === 'schema'
           ? `must be ${houseRulesSchemaVersion}, the version of house rules read here`
           : `must be ${values.length > 1 ? 'one of ' : ''}${values.join(', ')}`;
-      return [{ path, message }];
+      return [{ path, message: issue.input === undefined ? `is missing and ${message}` : message }];
     }
     case 'unrecognized_keys':
       return issue.keys.map((key) => ({
@@ -56,7 +59,6 @@ function describe(issue: z.core.$ZodIssue): RulesIssue[] {
         message: 'is not part of house rules',
       }));
     case 'invalid_format':
-      return [{ path, message: `must look like ${issue.pattern ?? issue.format}` }];
     case 'invalid_key':
       return [{ path, message: 'is not a key that is known here' }];
     case 'custom':
@@ -77,6 +79,16 @@ export function houseRulesConflicts(rules: HouseRules): RulesIssue[] {
     issues.push({
       path: `names.groups[${clash.second}].${field}`,
       message: `"${clash.text}" already stands for names.groups[${clash.first}]`,
+    });
+  }
+  if (rules.names.tokens.includes('group')) {
+    rules.names.groups.forEach((group, index) => {
+      if (wordsOf(groupText(group, rules.names), rules.names).length > 0) return;
+      const field = rules.names.groupStyle === 'letter' ? 'letter' : 'label';
+      issues.push({
+        path: `names.groups[${index}].${field}`,
+        message: 'has no character that names.characters allows',
+      });
     });
   }
   for (const list of ['diFor', 'dryFor', 'untunedFor'] as const) {
@@ -112,7 +124,7 @@ export function houseRulesConflicts(rules: HouseRules): RulesIssue[] {
  * they get wrong is listed with its place, all of it at once.
  */
 export function parseHouseRules(json: unknown): ParsedHouseRules {
-  const parsed = houseRulesSchema.safeParse(json);
+  const parsed = houseRulesSchema.safeParse(json, { reportInput: true });
   if (!parsed.success) return { issues: parsed.error.issues.flatMap(describe) };
   const conflicts = houseRulesConflicts(parsed.data);
   return conflicts.length > 0 ? { issues: conflicts } : { rules: parsed.data };

@@ -259,7 +259,7 @@ export const details: readonly DetailEntry[] = [
     written: 'Reverb',
     short: 'Verb',
     forms:
-      'reverb, verb, rvb, rev, reverbs, plate, hall, spring, hall reverb, plate reverb, hall verb, plate verb, room verb, room reverb, nachhall, chamber',
+      'reverb, verb, rvb, reverbs, plate, hall, spring, hall reverb, plate reverb, hall verb, plate verb, room verb, room reverb, nachhall, chamber',
   },
   {
     written: 'Delay',

@@ -29,7 +29,7 @@ export const keys: readonly InstrumentEntry[] = [
     forms: 'organ, org, orgel, orgue, organo, orgn, pipe organ, church organ, drawbar organ',
     misspelt: 'orgen, oragn',
   },
-  { written: 'Clav', short: 'Clav', forms: 'clav, clavichord, clv' },
+  { written: 'Clav', short: 'Clav', forms: 'clav, clavichord' },
   {
     written: 'Harpsichord',
     short: 'Hpsc',

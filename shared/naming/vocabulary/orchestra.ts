@@ -20,8 +20,7 @@ export const orchestra: readonly InstrumentEntry[] = [
   {
     written: 'Cello',
     short: 'Clo',
-    forms:
-      'cello, celli, clo, vlc, violoncello, violoncelle, violonchelo, violoncelli, cll, vcl, chelo',
+    forms: 'cello, celli, clo, vlc, violoncello, violoncelle, violonchelo, violoncelli, cll, chelo',
     misspelt: 'chello, celo, cellp',
     unsure: 'vc',
   },
