@@ -1,12 +1,8 @@
 import type { BoundedReader } from '../bytes/bounded-reader.ts';
 import { decodeChunkText } from './chunk-text.ts';
+import { maxChannels } from './format-limits.ts';
 import { readAiffMarkers } from './read-markers.ts';
-import {
-  maxChannels,
-  type TrackFormat,
-  type UnreadableReason,
-  type WaveReading,
-} from './track-format.ts';
+import type { TrackFormat, UnreadableReason, WaveReading } from './track-format.ts';
 import { chunkId, placeOf, walkChunks } from './walk-chunks.ts';
 
 const maxMarkBytes = 512 * 1024;

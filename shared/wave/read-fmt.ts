@@ -1,4 +1,5 @@
-import { maxChannels, type UnreadableReason } from './track-format.ts';
+import { maxChannels } from './format-limits.ts';
+import type { UnreadableReason } from './track-format.ts';
 
 /** What a `fmt ` chunk says, once its contradictions are settled. */
 export type WaveEncoding = {

@@ -1,7 +1,5 @@
 import { z } from 'zod';
-
-/** More channels than this is no format but damage. */
-export const maxChannels = 1024;
+import { maxChannels } from './format-limits.ts';
 
 /**
  * What a measured file is, in the words of its own header. Plain data: it travels in reports.
