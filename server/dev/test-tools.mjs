@@ -31,6 +31,7 @@ export const testTools = [
   command('unzip'),
   command('zip'),
   command('python3'),
+  command('pdftotext', 'poppler-utils'),
   {
     name: 'recordings',
     package: 'sonic-pi-samples',
