@@ -27,7 +27,7 @@ export function Frame({ children, mainRef }: FrameProps) {
     <div className="flex min-h-dvh flex-col">
       <a
         href="#main"
-        className="sr-only rounded bg-case px-4 py-2 text-on-case focus:not-sr-only focus:absolute focus:top-2 focus:left-2 focus:z-50"
+        className="sr-only rounded bg-case text-on-case focus:not-sr-only focus:absolute focus:top-2 focus:left-2 focus:z-50 focus:px-4 focus:py-2"
       >
         Skip to the page
       </a>

@@ -11,7 +11,8 @@ type MenuProps = {
 /** A short list of things to do. */
 export function Menu({ trigger, align = 'end', children }: MenuProps) {
   return (
-    <Parts.Root>
+    // Not modal: the page stays readable behind it, and the focus is kept by the menu itself.
+    <Parts.Root modal={false}>
       <Parts.Trigger asChild>{trigger}</Parts.Trigger>
       <Parts.Portal>
         <Parts.Content align={align} sideOffset={4} className="overlay-flyout min-w-48 p-1">

@@ -57,7 +57,7 @@ export function SignInPage() {
         submitWords="Sign in"
         busyWords="Signing in…"
         aside={
-          <Link to="/forgot-password" className="text-link text-small">
+          <Link to="/forgot-password" className="text-link inline-block py-1 text-small">
             Forgotten your password?
           </Link>
         }

@@ -11,8 +11,8 @@ export function StateSamples() {
           A song holds the reports of its checks.
         </EmptyState>
       </Panel>
-      <Panel title="Songs" lead="A list on its way.">
-        <LoadingState words="Loading songs…" />
+      <Panel title="Reports" lead="A list on its way.">
+        <LoadingState words="Loading reports…" />
       </Panel>
       <ErrorNotice
         title="The server is not ready just now."
