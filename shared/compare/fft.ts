@@ -7,11 +7,13 @@ export function fft(real: Float64Array, imaginary: Float64Array, inverse = false
   if (size !== imaginary.length || (size & (size - 1)) !== 0)
     throw new RangeError('An FFT needs two arrays of one length that is a power of two');
   reorderByReversedBits(real, imaginary);
+  const { cosines, sines } = rotations(size);
+  const direction = inverse ? 1 : -1;
   for (let half = 1; half < size; half *= 2) {
-    const angle = ((inverse ? 1 : -1) * Math.PI) / half;
+    const step = size / (2 * half);
     for (let position = 0; position < half; position += 1) {
-      const cos = Math.cos(angle * position);
-      const sin = Math.sin(angle * position);
+      const cos = cosines[position * step]!;
+      const sin = direction * sines[position * step]!;
       for (let low = position; low < size; low += 2 * half) {
         const high = low + half;
         const re = real[high]! * cos - imaginary[high]! * sin;
@@ -28,6 +30,24 @@ export function fft(real: Float64Array, imaginary: Float64Array, inverse = false
     real[index] = real[index]! / size;
     imaginary[index] = imaginary[index]! / size;
   }
+}
+
+type Rotations = { cosines: Float64Array; sines: Float64Array };
+const known = new Map<number, Rotations>();
+
+/** Cosines and sines of half a turn in size / 2 steps; the same few sizes come again and again. */
+function rotations(size: number): Rotations {
+  const before = known.get(size);
+  if (before) return before;
+  const cosines = Float64Array.from({ length: size / 2 }, (_, step) =>
+    Math.cos((2 * Math.PI * step) / size),
+  );
+  const sines = Float64Array.from({ length: size / 2 }, (_, step) =>
+    Math.sin((2 * Math.PI * step) / size),
+  );
+  const made = { cosines, sines };
+  known.set(size, made);
+  return made;
 }
 
 function reorderByReversedBits(real: Float64Array, imaginary: Float64Array): void {

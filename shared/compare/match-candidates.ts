@@ -31,6 +31,15 @@ const outlinePeakNeeded = 8;
 /** The same sound agrees this well in outline, but for the steps of the overview. */
 const outlineCorrelation = 0.9;
 
+/**
+ * Put in order of loudness, the columns of the same sound agree this well wherever it stands: so
+ * most pairs are refused before anything is slid along anything.
+ */
+const sortedCorrelation = 0.99;
+
+/** The loudest sample of each column, in time and in order of loudness. */
+type Outline = { peaks: Float64Array; sorted: Float64Array };
+
 /** Below this a file counts as silent here: nothing could be verified in it. */
 const quietestPeakDbfs = -80;
 
@@ -45,7 +54,7 @@ export function matchCandidates(tracks: readonly ComparedTrack[]): MatchCandidat
     return print === null ? [] : [{ track, order, ...print }];
   });
   prints.sort((a, b) => a.kind.localeCompare(b.kind) || a.crestDb - b.crestDb || a.order - b.order);
-  const outlines = new Map<string, Float64Array>();
+  const outlines = new Map<string, Outline>();
   const candidates: (MatchCandidate & { orders: [number, number] })[] = [];
   prints.forEach((print, index) => {
     for (let next = index + 1; next < prints.length; next += 1) {
@@ -98,25 +107,28 @@ function sameHash(a: ComparedTrack, b: ComparedTrack): boolean {
 function likelyShifts(
   first: ComparedTrack,
   second: ComparedTrack,
-  outlines: Map<string, Float64Array>,
+  outlines: Map<string, Outline>,
 ): number[] | null {
   const shifts = [0];
   if (first.overview && second.overview) {
     const width = Math.max(first.overview.framesPerColumn, second.overview.framesPerColumn);
-    const outlineOf = (track: ComparedTrack, overview: Overview): Float64Array => {
+    const outlineOf = (track: ComparedTrack, overview: Overview): Outline => {
       const key = `${width} ${track.path}`;
       const known = outlines.get(key);
       if (known) return known;
-      const made = coarserOutline(outline(overview), overview.framesPerColumn, width);
+      const peaks = coarserOutline(outline(overview), overview.framesPerColumn, width);
+      const made = { peaks, sorted: peaks.slice().sort().reverse() };
       outlines.set(key, made);
       return made;
     };
     const a = outlineOf(first, first.overview);
     const b = outlineOf(second, second.overview);
-    const { columns, correlation } = bestShift(a, b);
-    const visible = Math.min(highest(a), highest(b)) >= outlinePeakNeeded;
-    if (visible && correlation < outlineCorrelation) return null;
-    if (visible) shifts.push(columns * width);
+    if (Math.min(highest(a.peaks), highest(b.peaks)) >= outlinePeakNeeded) {
+      if (likeness(a.sorted, b.sorted) < sortedCorrelation) return null;
+      const { columns, correlation } = bestShift(a.peaks, b.peaks);
+      if (correlation < outlineCorrelation) return null;
+      shifts.push(columns * width);
+    }
   }
   const [from, to] = [first.measures.channels[0], second.measures.channels[0]];
   if (from && to && from.firstSoundFrame !== null && to.firstSoundFrame !== null)
@@ -124,6 +136,20 @@ function likelyShifts(
   if (from && to && from.lastSoundFrame !== null && to.lastSoundFrame !== null)
     shifts.push(to.lastSoundFrame - from.lastSoundFrame);
   return [...new Set(shifts)];
+}
+
+/** Correlation of two outlines column by column; the longer one may end in silence. */
+function likeness(a: Float64Array, b: Float64Array): number {
+  let product = 0;
+  let squareA = 0;
+  let squareB = 0;
+  for (let column = 0; column < Math.max(a.length, b.length); column += 1) {
+    const [own, other] = [a[column] ?? 0, b[column] ?? 0];
+    product += own * other;
+    squareA += own * own;
+    squareB += other * other;
+  }
+  return product / Math.sqrt(squareA * squareB);
 }
 
 function highest(values: Float64Array): number {

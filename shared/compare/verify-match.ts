@@ -54,7 +54,7 @@ export async function verifyMatch(
   const gain = product / own;
   // What is left of the second once the first is taken out of it, over the second.
   const left = Math.max(0, 1 - (product * product) / (own * other));
-  const under = left > 0 ? Math.min(nothingLeftDb, -10 * Math.log10(left)) : nothingLeftDb;
+  const under = Math.min(downBy(left), downBy(unseenDifference(first, second, gain)));
   if (under < leastDifferenceUnderDb) return null;
   return {
     first: first.path,
@@ -64,6 +64,26 @@ export async function verifyMatch(
     inverted: gain < 0,
     differenceUnderDb: round(under, 1),
   };
+}
+
+function downBy(share: number): number {
+  return share > 0 ? Math.min(nothingLeftDb, -10 * Math.log10(share)) : nothingLeftDb;
+}
+
+/**
+ * The windows show only a part. If the files also differ elsewhere, one of them cut or gated
+ * there, their whole energies do not differ by just the gain. The share of energy that is amiss.
+ */
+function unseenDifference(first: ComparedTrack, second: ComparedTrack, gain: number): number {
+  const expected = energyOf(first) * gain * gain;
+  return Math.abs(energyOf(second) / expected - 1);
+}
+
+function energyOf({ measures }: ComparedTrack): number {
+  const squares = measures.channels
+    .slice(0, differentChannels(measures))
+    .reduce((sum, { rmsDbfs }) => sum + (rmsDbfs === null ? 0 : 10 ** (rmsDbfs / 10)), 0);
+  return squares * measures.frames;
 }
 
 /** The loudest places of the file, spread over its length, the loudest first. */

@@ -2,7 +2,7 @@ import { joinPlaces } from '../../findings/finding-places.ts';
 import type { ChannelMeasures } from '../../measure/measures.ts';
 import type { Thresholds } from '../../rules/thresholds.ts';
 import type { Level } from '../../findings/finding.ts';
-import { found, type TrackCheck } from '../check.ts';
+import { found, type CheckedTrack, type TrackCheck } from '../check.ts';
 import { clippingClass, type ClippingClass } from '../clipping-class.ts';
 import { highest, onlyChannel } from '../track-measures.ts';
 
@@ -10,7 +10,7 @@ import { highest, onlyChannel } from '../track-measures.ts';
 export const clipped: TrackCheck = (track, { rules }) => {
   const { channels } = track.measures;
   const hit = channels.flatMap((channel, index) =>
-    isClipped(channel, rules.signal) ? [{ channel, index }] : [],
+    isClipped(channel, track, rules.signal) ? [{ channel, index }] : [],
   );
   if (hit.length === 0) return null;
   const runs = hit.reduce((sum, { channel }) => sum + channel.clippedRuns, 0);
@@ -42,9 +42,32 @@ export const clipped: TrackCheck = (track, { rules }) => {
 };
 
 /** Enough runs or samples to be more than chance, and not flat by design. */
-export function isClipped({ clipping, clippedRuns }: ChannelMeasures, rules: Thresholds): boolean {
+export function isClipped(
+  channel: ChannelMeasures,
+  track: CheckedTrack,
+  rules: Thresholds,
+): boolean {
+  return hasFlatRuns(channel, rules) && !isFlatByDesign(channel, track, rules);
+}
+
+/** So many flat tops a second are no overload but a sound, of parts that are distorted at times. */
+const denseRunsPerSecond = 50;
+
+/**
+ * Nearly every cycle ends flat; or, where distortion is often wanted and nothing hits full scale,
+ * so many of them that a fuzz or a clipper must have made them.
+ */
+function isFlatByDesign(
+  { clipping, clippedRuns }: ChannelMeasures,
+  { name, measures, format }: CheckedTrack,
+  rules: Thresholds,
+): boolean {
+  if (clipping.flatCycleShare >= rules.flatTopsShare) return true;
+  const seconds = measures.frames / format.sampleRateHz;
   return (
-    hasFlatRuns({ clipping, clippedRuns }, rules) && clipping.flatCycleShare < rules.flatTopsShare
+    clippingClass(name) === 'often-wanted' &&
+    clipping.fullScaleRuns === 0 &&
+    clippedRuns >= denseRunsPerSecond * seconds
   );
 }
 

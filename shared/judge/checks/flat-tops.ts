@@ -3,9 +3,9 @@ import { highest, onlyChannel } from '../track-measures.ts';
 import { hasFlatRuns, isClipped } from './clipped.ts';
 
 /** Flat in nearly every cycle: fuzz, a square wave, clipped on purpose. Worth knowing, no fault. */
-export const flatTops: TrackCheck = ({ measures }, { rules }) => {
-  const { channels } = measures;
-  if (channels.some((channel) => isClipped(channel, rules.signal))) return null;
+export const flatTops: TrackCheck = (track, { rules }) => {
+  const { channels } = track.measures;
+  if (channels.some((channel) => isClipped(channel, track, rules.signal))) return null;
   const flat = channels.flatMap((channel, index) =>
     hasFlatRuns(channel, rules.signal) ? [{ channel, index }] : [],
   );

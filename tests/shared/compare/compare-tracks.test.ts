@@ -45,7 +45,7 @@ describe('compareTracks: the same audio', () => {
         differenceUnderDb: expect.any(Number) as number,
       },
     ]);
-    expect(matches[0]?.differenceUnderDb).toBeGreaterThan(90);
+    expect(matches[0]?.differenceUnderDb).toBeGreaterThan(80);
     expect(sounds.framesRead()).toBeLessThan(500_000);
   });
 
@@ -108,13 +108,14 @@ describe('compareTracks: the same audio', () => {
       }),
     );
     const sounds = comparedSounds(hundred);
-    const start = performance.now();
+    const start = process.cpuUsage();
     const { matches } = await compareTracks(sounds.tracks, sounds.read);
+    const { user, system } = process.cpuUsage(start);
     expect(matches).toEqual([]);
-    expect(performance.now() - start).toBeLessThan(4_000);
+    expect((user + system) / 1e6).toBeLessThan(4);
     // All 4,950 pairs read would be more than 400 million frames.
-    expect(sounds.framesRead()).toBeLessThan(20_000_000);
-  });
+    expect(sounds.framesRead()).toBeLessThan(5_000_000);
+  }, 60_000);
 
   it('leaves out a file that has gone, and stops when told to', async () => {
     const sound = placed(loop, 0, frames);

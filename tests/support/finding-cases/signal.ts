@@ -311,7 +311,10 @@ export const signalCases = {
         measuredFile({
           path,
           format: { channels: 2 },
-          channels: [{ soundingDcOffset: 0.002 }, { soundingDcOffset: -0.0101 }],
+          channels: [
+            { soundingDcOffset: 0.002, dcOffset: 0.001 },
+            { soundingDcOffset: -0.0101, dcOffset: -0.005 },
+          ],
         }),
       ],
     },
