@@ -1,12 +1,13 @@
 import { createXXHash128 } from 'hash-wasm';
 import type { TrackFormat, WaveLayout } from '../../wave/track-format.ts';
+import { decodeChannel } from '../decode-channel.ts';
 import { describeMeasures } from '../describe-measures.ts';
 import { maxMeasuredChannels } from '../measures.ts';
 import type { MeterEngine } from '../meter.ts';
 import { chooseFramesPerColumn } from '../overview.ts';
 import type { RawChannel, RawMeasures } from '../raw-measures.ts';
 import { crc32 } from './crc32.ts';
-import { canonicalBytes, decodeSamples } from './decode-samples.ts';
+import { canonicalBytes } from './canonical-bytes.ts';
 import { drawOverview } from './draw-overview.ts';
 import { findGrid } from './find-grid.ts';
 import { findOutliers } from './find-outliers.ts';
@@ -60,7 +61,7 @@ function measureFile(
   const data = file.subarray(layout.dataOffset, layout.dataOffset + layout.dataBytes);
   const measured = Math.min(format.channels, maxMeasuredChannels);
   const decoded = Array.from({ length: measured }, (_, channel) =>
-    decodeSamples(data, channel, format, layout),
+    decodeChannel(data, channel, format, layout),
   );
   const samples = decoded.map((channel) => channel.map((x) => (Number.isFinite(x) ? x : 0)));
   const frames = samples[0]?.length ?? 0;
