@@ -1,10 +1,8 @@
-import type { DroppedFile } from '../bytes/byte-source.ts';
-
 /**
  * A zip of a folder has that folder's name in front of every path; what was dropped is then the
  * folder. Paths lose the one folder that all of them lie in; junk beside it does not count.
  */
-export function withoutCommonFolder<File extends DroppedFile>(
+export function withoutCommonFolder<File extends { path: string }>(
   files: readonly File[],
   isJunk: (path: string) => boolean,
 ): File[] {

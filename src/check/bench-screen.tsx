@@ -1,21 +1,24 @@
 import { useEffect, useMemo, useState, useSyncExternalStore } from 'react';
 import type { Edition } from '#shared/api/rules.ts';
+import type { Overview } from '#shared/measure/overview.ts';
 import { safeRepairs } from '#shared/repair/choose-repairs.ts';
+import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
 import type { HouseRules } from '#shared/rules/house-rules.ts';
 import { ErrorPanel } from '../app/error-panel.tsx';
 import { Page } from '../app/shell.tsx';
 import { Button } from '../ui/button.tsx';
 import { PageHeader } from '../ui/page-header.tsx';
-import { Progress } from '../ui/progress.tsx';
-import { Bench, type BenchState } from './bench.ts';
-import { byteWords } from './byte-words.ts';
+import { Bench } from './bench.ts';
+import type { BenchState } from './bench-state.ts';
 import { Intake, Pickers, usePageDrop } from './intake.tsx';
-import { allFindings } from './report-findings.ts';
+import { IntakeProblems } from './intake-problems.tsx';
+import { ReadingProgressBar } from './reading-progress.tsx';
 import { ReportHeader } from './report-header.tsx';
 import { ReportView } from './report-view.tsx';
 import { SaveBar } from './save-bar.tsx';
 import { SongFields } from './song-fields.tsx';
 import { StoreReport } from './store-report-button.tsx';
+import { allFindings, type ViewedSession } from './viewed-session.ts';
 
 type BenchScreenProps = {
   rules: HouseRules;
@@ -29,8 +32,16 @@ type BenchScreenProps = {
 export function BenchScreen({ rules, edition, projectId }: BenchScreenProps) {
   const bench = useBench(rules);
   const state = useSyncExternalStore(bench.subscribe, bench.getState);
-  if (state.phase === 'checked' && state.report) {
-    return <CheckedBench bench={bench} state={state} edition={edition} projectId={projectId} />;
+  if (state.phase !== 'waiting' && state.view) {
+    return (
+      <BusyBench
+        bench={bench}
+        state={state}
+        view={state.view}
+        edition={edition}
+        projectId={projectId}
+      />
+    );
   }
   return (
     <Page>
@@ -48,20 +59,13 @@ export function BenchScreen({ rules, edition, projectId }: BenchScreenProps) {
         </div>
       )}
       {state.phase === 'waiting' ? (
-        <Intake onFolder={bench.drop} onFailure={bench.fail}>
-          <p className="text-small text-ink-2">
-            No session at hand?{' '}
-            <button type="button" className="text-link" onClick={() => void bench.dropSample()}>
-              Try it with a sample
-            </button>
-            : fourteen faulty little files, made on the spot.
-          </p>
-          <div className="w-full max-w-2xl border-t border-line pt-5">
-            <SongFields information={state.information} onChange={bench.setInformation} />
-          </div>
+        <Intake onFolder={bench.drop} onFailure={bench.fail} onSample={bench.dropSample}>
+          <SongFields information={state.information} onChange={bench.setInformation} />
         </Intake>
       ) : (
-        <Measuring state={state} onCancel={bench.cancel} />
+        <div className="rounded-panel border border-line bg-sheet px-6 py-10">
+          <ReadingProgressBar state={state} onCancel={bench.cancel} />
+        </div>
       )}
     </Page>
   );
@@ -73,56 +77,23 @@ function useBench(rules: HouseRules): Bench {
   return bench;
 }
 
-function Measuring({ state, onCancel }: { state: BenchState; onCancel: () => void }) {
-  const { progress, phase } = state;
-  const done = progress ? progress.bytesDone / Math.max(1, progress.bytes) : undefined;
-  return (
-    <section
-      aria-label="Progress"
-      className="flex flex-col gap-5 rounded-panel border border-line bg-sheet px-6 py-10"
-    >
-      <p className="text-section">
-        {phase === 'measuring' ? 'Listening to every file once' : 'Holding the files side by side'}
-      </p>
-      <Progress label="Check" value={phase === 'measuring' ? done : undefined}>
-        {progress &&
-          `${String(progress.filesDone)} of ${String(progress.files)} files, ${byteWords(progress.bytesDone)} of ${byteWords(progress.bytes)}`}
-      </Progress>
-      <div>
-        <Button onClick={onCancel}>Cancel</Button>
-      </div>
-    </section>
-  );
-}
-
-type CheckedBenchProps = {
+type BusyBenchProps = Omit<BenchScreenProps, 'rules'> & {
   bench: Bench;
   state: BenchState;
-  edition: Edition | null;
-  projectId: string | null;
+  view: ViewedSession;
 };
 
-function CheckedBench({ bench, state, edition, projectId }: CheckedBenchProps) {
-  const report = state.report!;
+/** Something is on the bench: being read, or checked. */
+function BusyBench({ bench, state, view, edition, projectId }: BusyBenchProps) {
   usePageDrop(bench.drop, bench.fail);
   const [fieldsShown, setFieldsShown] = useState(false);
-  const overviews = useMemo(
-    () =>
-      new Map(
-        (state.check?.files ?? []).flatMap(({ path, overview }) =>
-          overview ? [[path, overview] as const] : [],
-        ),
-      ),
-    [state.check],
-  );
-  const open = safeRepairs(allFindings(report)).filter(
-    (repair) =>
-      !state.chosen.some(({ code, files }) => code === repair.code && files[0] === repair.files[0]),
-  );
-  const title = report.information.title ?? state.folderName ?? 'Checked files';
+  const overviews = useMemo(() => overviewsOf(state.check), [state.check]);
+  const title = state.information.title ?? state.folderName ?? 'Checked files';
+  const checked = state.phase === 'checked';
+  const open = checked ? openRepairs(view, state.chosen) : [];
   return (
     <div className="flex grow flex-col">
-      <ReportHeader title={title} report={report} readingMs={state.readingMs}>
+      <ReportHeader title={title} view={view} reading={state.reading}>
         <Button aria-expanded={fieldsShown} onClick={() => setFieldsShown(!fieldsShown)}>
           Artist, song, tempo
         </Button>
@@ -137,35 +108,57 @@ function CheckedBench({ bench, state, edition, projectId }: CheckedBenchProps) {
           <SongFields information={state.information} onChange={bench.setInformation} />
         </div>
       )}
+      {!checked && (
+        <div className="px-4 pb-5 sm:px-7">
+          <ReadingProgressBar state={state} onCancel={bench.cancel} />
+        </div>
+      )}
       {state.failure !== null && (
         <div className="px-4 pb-4 sm:px-7">
           <ErrorPanel error={state.failure} />
         </div>
       )}
+      <IntakeProblems problems={state.problems} />
       <ReportView
-        report={report}
+        view={view}
         overviews={overviews}
         chosen={state.chosen}
-        onChoose={bench.choose}
-        onUndo={bench.undo}
+        {...(checked && { onChoose: bench.choose, onUndo: bench.undo, onAnswer: bench.answer })}
       />
-      <div className="border-t border-line bg-sheet px-4 py-5 sm:px-7">
-        <p className="mb-3 text-small text-ink-2">
-          Another folder? Drop it anywhere, or choose it here.
+      <div className="flex flex-wrap items-center gap-x-6 gap-y-3 border-t border-line bg-sheet px-4 py-5 sm:px-7">
+        <p className="text-small text-ink-2">
+          Exported something again? Drop the folder or single files anywhere: only what changed is
+          read.
         </p>
-        <div className="flex justify-start">
-          <Pickers onFolder={bench.drop} />
-        </div>
+        <Pickers onFolder={bench.drop} quiet />
       </div>
-      <SaveBar bench={bench} report={report}>
-        <StoreReport
-          report={report}
-          overviews={overviews}
-          songTitle={title}
-          edition={edition}
-          projectId={projectId}
-        />
-      </SaveBar>
+      {checked && state.report && (
+        <SaveBar bench={bench} report={state.report}>
+          <StoreReport
+            report={state.report}
+            overviews={overviews}
+            songTitle={title}
+            edition={edition}
+            projectId={projectId}
+          />
+        </SaveBar>
+      )}
     </div>
+  );
+}
+
+function overviewsOf(check: BenchState['check']): ReadonlyMap<string, Overview> {
+  return new Map(
+    (check?.files ?? []).flatMap(({ path, overview }) =>
+      overview ? [[path, overview] as const] : [],
+    ),
+  );
+}
+
+/** Safe repairs that nobody has taken yet. */
+function openRepairs(view: ViewedSession, chosen: readonly ChosenRepair[]): ChosenRepair[] {
+  return safeRepairs(allFindings(view)).filter(
+    (repair) =>
+      !chosen.some(({ code, files }) => code === repair.code && files[0] === repair.files[0]),
   );
 }

@@ -1,80 +1,53 @@
-import { judgeCheck, type RepairedSession, type SessionCheck } from '#shared/check.ts';
-import type { Comparison } from '#shared/compare/comparison.ts';
+import { judgeCheck, type SessionCheck } from '#shared/check.ts';
+import { emptyComparison, type Comparison } from '#shared/compare/comparison.ts';
 import { AppError } from '#shared/errors.ts';
 import type { Finding } from '#shared/findings/finding.ts';
 import { unaskedRepairs } from '#shared/repair/choose-repairs.ts';
 import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
 import { buildReport } from '#shared/report/build-report.ts';
-import type { CheckReport } from '#shared/report/check-report.ts';
 import type { HouseRules } from '#shared/rules/house-rules.ts';
-import { measureAll, type MeasureProgress } from '#shared/session/measure-all.ts';
+import { measureAll } from '#shared/session/measure-all.ts';
 import type { MeasuredFile } from '#shared/session/measured-file.ts';
-import {
-  emptySessionInformation,
-  type SessionInformation,
-} from '#shared/session/session-information.ts';
+import type { AnswerKind, SessionInformation } from '#shared/session/session-information.ts';
 import type { DroppedFolder } from '../browser/dropped-files.ts';
 import { fileOnDisk } from '../browser/file-source.ts';
 import { loadMeters } from '../browser/load-meters.ts';
-import { WorkerLink } from '../workers/bridge.ts';
+import type { FileToRead } from '../workers/file-to-read.ts';
 import { createMeasurePool, type MeasurePool } from '../workers/measure-pool.ts';
-import { sampleSong } from './sample-session/sample-song.ts';
+import { makeSampleFiles } from '../workers/sample-link.ts';
 import { openSessionWorker, type SessionWorker } from '../workers/session-link.ts';
-import type { SampleApi } from '../workers/sample-api.ts';
-import type { FileToRead } from '../workers/session-api.ts';
+import { answered } from './answers.ts';
+import { judgedFindings, waitingBench, type BenchState } from './bench-state.ts';
+import { listIntake } from './intake-list.ts';
+import { recallSong, rememberSong } from './remembered-songs.ts';
+import { sampleSong } from './sample-session/sample-song.ts';
+import { viewCheck, viewUnfinished } from './viewed-session.ts';
 
-/** Every finding of a check, whatever it is about. */
-function judgedFindings({ judgement }: SessionCheck): Finding[] {
-  return [...judgement.files.flatMap(({ findings }) => findings), ...judgement.session.findings];
-}
+/** How often a running check is drawn anew, in milliseconds. */
+const previewMs = 250;
+const progressMs = 100;
 
-export type BenchPhase = 'waiting' | 'measuring' | 'comparing' | 'checked';
-
-/** Everything the screen shows; a new object at every change. */
-export type BenchState = {
-  phase: BenchPhase;
-  folderName: string | null;
-  progress: MeasureProgress | null;
-  /** Milliseconds the reading took; null until it is over. */
-  readingMs: number | null;
-  information: SessionInformation;
-  chosen: ChosenRepair[];
-  check: SessionCheck | null;
-  /** What the chosen repairs make; null while that is worked out. */
-  repaired: RepairedSession | null;
-  report: CheckReport | null;
-  failure: unknown;
-};
-
-const waiting: BenchState = {
-  phase: 'waiting',
-  folderName: null,
-  progress: null,
-  readingMs: null,
-  information: emptySessionInformation(),
-  chosen: [],
-  check: null,
-  repaired: null,
-  report: null,
-  failure: null,
-};
+/** Typing should not render repaired files at every letter. */
+const typingMs = 400;
 
 /**
  * The check as it runs in one tab: takes a dropped folder through measuring, comparing, judging
  * and repairing, and holds what came of it. Knows no React, so it can be tested without.
  */
 export class Bench {
-  private state: BenchState = waiting;
+  private state: BenchState = waitingBench;
   private readonly listeners = new Set<() => void>();
+  private readonly rules: HouseRules;
+  private files: FileToRead[] = [];
+  /** What was measured, by the file's stamp: a file that did not change is not read again. */
+  private measured = new Map<string, MeasuredFile>();
+  private comparison: Comparison | null = null;
   private running: AbortController | null = null;
   private repairing: AbortController | null = null;
-  private files: FileToRead[] = [];
-  private measured: MeasuredFile[] = [];
-  private comparison: Comparison | null = null;
+  private repairTimer: ReturnType<typeof setTimeout> | undefined;
   private module: Promise<WebAssembly.Module> | null = null;
   private pool: MeasurePool | null = null;
-  private worker: SessionWorker | null = null;
-  private readonly rules: HouseRules;
+  private worker: Promise<SessionWorker> | null = null;
 
   constructor(rules: HouseRules) {
     this.rules = rules;
@@ -87,57 +60,72 @@ export class Bench {
     return () => this.listeners.delete(listener);
   };
 
-  /** Checks a dropped folder; what was on the bench before is put away. */
+  /**
+   * Takes in what was dropped. A folder or a zip is a new check (or the same session exported
+   * again: what did not change is not read again); loose files join the session on the bench and
+   * replace files of their name.
+   */
   readonly drop = (folder: DroppedFolder): void => {
-    void this.run(folder);
+    void this.whileRunning(async (signal) => {
+      const intake = await listIntake(folder, () => this.sessionWorker(), signal);
+      const joins = intake.folderName === null && this.files.length > 0;
+      const files = joins ? joinFiles(this.files, intake.files) : intake.files;
+      const folderName = joins ? this.state.folderName : intake.folderName;
+      if (!joins && folderName !== this.state.folderName) this.startSong(folderName);
+      this.set({ folderName, problems: intake.problems });
+      await this.check(files, signal);
+    });
   };
 
   /** Makes the sample session in a worker and checks it like any other folder. */
-  readonly dropSample = async (): Promise<void> => {
-    const link = new WorkerLink<SampleApi>(
-      new Worker(new URL('../workers/sample.worker.ts', import.meta.url), { type: 'module' }),
-    );
+  readonly dropSample = (): void => {
     const { artist, title, bpm } = sampleSong;
-    this.set({
-      ...waiting,
-      phase: 'measuring',
-      information: { ...waiting.information, artist, title, tempo: { kind: 'fixed', bpm } },
+    void this.whileRunning(async (signal) => {
+      this.set({
+        ...waitingBench,
+        phase: 'making-sample',
+        folderName: title,
+        information: { ...waitingBench.information, artist, title, tempo: { kind: 'fixed', bpm } },
+      });
+      await this.check(await makeSampleFiles(signal), signal);
     });
-    try {
-      const files = await link.call('make', null);
-      await this.run({ folderName: title, files });
-    } catch (failure) {
-      this.set({ ...waiting, failure });
-    } finally {
-      link.close();
-    }
   };
 
-  /** Stops at once and clears the bench. */
+  /** Stops at once. What was checked before a second reading stays on the bench. */
   readonly cancel = (): void => {
     this.running?.abort();
-    this.set({ ...waiting, information: this.state.information });
+    this.set({ ...waitingBench, information: this.state.information });
+    this.files = [];
   };
 
-  readonly fail = (failure: unknown): void => {
-    this.set({ failure });
-  };
+  readonly fail = (failure: unknown): void => this.set({ failure });
 
   readonly setInformation = (change: Partial<SessionInformation>): void => {
     this.set({ information: { ...this.state.information, ...change } });
-    if (this.state.phase === 'checked') void this.judge();
+    rememberSong(this.state.folderName, this.state.information);
+    if (this.state.phase === 'checked') this.judge(typingMs);
+  };
+
+  /** What the artist says about a finding; null takes it back. */
+  readonly answer = (finding: Finding, answer: AnswerKind | null): void => {
+    this.setInformation({ answers: answered(this.state.information.answers, finding, answer) });
   };
 
   /** Takes repairs on; each can be taken back. */
   readonly choose = (repairs: readonly ChosenRepair[]): void => {
     this.set({ chosen: [...this.state.chosen, ...repairs] });
-    void this.judge();
+    this.judge(0);
   };
 
   readonly undo = (repairs: readonly ChosenRepair[]): void => {
     this.set({ chosen: this.state.chosen.filter((chosen) => !repairs.includes(chosen)) });
-    void this.judge();
+    this.judge(0);
   };
+
+  /** The dropped file behind a path, to look at or listen to a part of it. */
+  fileAt(path: string): FileToRead | undefined {
+    return this.files.find((file) => file.path === path);
+  }
 
   /** Lays the zip out: its name and exact size, before a byte is made. */
   readonly prepare = async (): Promise<{ fileName: string; bytes: number }> => {
@@ -147,16 +135,19 @@ export class Bench {
     return worker.call('prepare', { files: this.files, check, repaired, report });
   };
 
-  readonly sessionWorker = async (): Promise<SessionWorker> => {
-    this.worker ??= await openSessionWorker(await this.meters());
+  readonly sessionWorker = (): Promise<SessionWorker> => {
+    this.worker ??= this.meters().then(openSessionWorker);
     return this.worker;
   };
 
   close(): void {
     this.running?.abort();
     this.repairing?.abort();
+    clearTimeout(this.repairTimer);
     this.pool?.close();
-    this.worker?.close();
+    void this.worker?.then((worker) => worker.close());
+    this.pool = null;
+    this.worker = null;
   }
 
   private set(change: Partial<BenchState>): void {
@@ -172,83 +163,177 @@ export class Bench {
     return this.module;
   }
 
-  private async run({ folderName, files }: DroppedFolder): Promise<void> {
+  private startSong(folderName: string | null): void {
+    const { artist, title, tempo } = this.state.information;
+    // What was typed before the drop is about this song.
+    const said = { ...(artist && { artist }), ...(title && { title }), ...(tempo && { tempo }) };
+    const information = { ...(recallSong(folderName) ?? waitingBench.information), ...said };
+    this.set({ ...waitingBench, folderName, information });
+  }
+
+  private async whileRunning(work: (signal: AbortSignal) => Promise<void>): Promise<void> {
     this.running?.abort();
     const running = new AbortController();
     this.running = running;
-    this.files = files;
-    this.set({ ...waiting, phase: 'measuring', folderName, information: this.state.information });
-    const startedAt = performance.now();
     try {
-      this.measured = await this.measure(running.signal);
-      this.set({ phase: 'comparing', readingMs: performance.now() - startedAt });
-      const worker = await this.sessionWorker();
-      this.comparison = await worker.call(
-        'compare',
-        { files: this.files, measured: this.measured },
-        { signal: running.signal },
-      );
-      await this.judge();
-      const { failure } = this.state;
-      if (running.signal.aborted) return;
-      this.set(failure === null ? { phase: 'checked' } : { ...waiting, failure });
+      await work(running.signal);
     } catch (failure) {
-      if (!running.signal.aborted) this.set({ ...waiting, failure });
+      if (running.signal.aborted) return;
+      // A second reading that fails leaves what was there.
+      const phase = this.state.check && this.comparison ? 'checked' : 'waiting';
+      this.set({ phase, failure });
     }
   }
 
-  private measure(signal: AbortSignal): Promise<MeasuredFile[]> {
-    const { files } = this;
+  private async check(files: FileToRead[], signal: AbortSignal): Promise<void> {
     if (files.length === 0) throw new AppError('nothing-to-check');
-    const byPath = new Map(files.map(({ path, file }) => [path, file]));
-    this.pool ??= createMeasurePool(() => this.meters());
-    const pool = this.pool;
-    return measureAll(
-      files.map(({ path, file }) => fileOnDisk(path, file)),
-      ({ path }, options) => {
-        let readBytes = 0;
-        return pool.measure(
-          { path, file: byPath.get(path)! },
-          {
-            signal: options.signal,
-            onProgress: (bytes) => {
-              options.onBytes?.(bytes - readBytes);
-              readBytes = bytes;
-            },
-          },
-        );
-      },
-      { atOnce: pool.size, signal, onProgress: (progress) => this.set({ progress }) },
-    );
+    this.files = files;
+    this.comparison = null;
+    this.repairing?.abort();
+    this.set({ phase: 'measuring', failure: null, reading: null, repaired: null, report: null });
+    const startedAt = performance.now();
+    const bytes = await this.measure(files, startedAt, signal);
+    const measured = this.measuredFiles();
+    if (measured.every(({ reading }) => reading.kind === 'not-audio')) {
+      this.files = [];
+      this.set({ ...waitingBench, information: this.state.information });
+      throw new AppError('nothing-to-check');
+    }
+    this.set({ phase: 'comparing', reading: { ms: performance.now() - startedAt, bytes } });
+    const worker = await this.sessionWorker();
+    this.comparison = await worker.call('compare', { files, measured }, { signal });
+    this.set({ phase: 'checked', progress: null });
+    this.judge(0);
   }
 
-  /** Judges again and works out what the chosen repairs make; a later call overtakes. */
-  private async judge(): Promise<void> {
-    const { comparison, measured, rules, files } = this;
-    if (!comparison) return;
+  /** Measures what is new or changed; answers how many bytes that was. */
+  private async measure(
+    files: readonly FileToRead[],
+    startedAt: number,
+    signal: AbortSignal,
+  ): Promise<number> {
+    const kept = new Map(
+      files.flatMap((file) => {
+        const known = this.measured.get(stampOf(file));
+        return known ? [[stampOf(file), known] as const] : [];
+      }),
+    );
+    this.measured = kept;
+    const waiting = new Map(
+      files.filter((file) => !kept.has(stampOf(file))).map((file) => [file.path, file]),
+    );
+    const pool = (this.pool ??= createMeasurePool(() => this.meters()));
+    const current = new Map<string, number>();
+    let previewAt = 0;
+    let progressAt = 0;
+    let bytes = 0;
+    await measureAll(
+      [...waiting.values()].map(({ path, file, size }) => ({ ...fileOnDisk(path, file), size })),
+      async ({ path }, options) => {
+        const file = waiting.get(path)!;
+        current.set(path, 0);
+        const measured = await pool.measure(file, {
+          signal: options.signal,
+          onProgress: (readBytes) => {
+            options.onBytes?.(readBytes - (current.get(path) ?? 0));
+            current.set(path, readBytes);
+          },
+        });
+        current.delete(path);
+        this.measured.set(stampOf(file), measured);
+        return measured;
+      },
+      {
+        atOnce: pool.size,
+        signal,
+        onProgress: (progress) => {
+          bytes = progress.bytes;
+          const now = performance.now();
+          if (now - progressAt > progressMs) {
+            progressAt = now;
+            this.set({ progress: { ...progress, startedAt, current: new Map(current) } });
+          }
+          if (now - previewAt > previewMs) {
+            previewAt = now;
+            this.preview();
+          }
+        },
+      },
+    );
+    return bytes;
+  }
+
+  private measuredFiles(): MeasuredFile[] {
+    return this.files
+      .flatMap((file) => this.measured.get(stampOf(file)) ?? [])
+      .sort((a, b) => (a.path < b.path ? -1 : 1));
+  }
+
+  /** What can be said of the files that are measured, while others are still read. */
+  private preview(): void {
+    const files = this.measuredFiles();
+    const check = judgeCheck(
+      { files, comparison: emptyComparison() },
+      this.rules,
+      this.state.information,
+    );
+    this.set({ check, view: viewUnfinished(check, this.state.information, this.rules) });
+  }
+
+  /** Judges at once, and works out what the chosen repairs make after a pause. */
+  private judge(pauseMs: number): void {
+    if (!this.comparison) return;
+    const { rules } = this;
+    const { information, chosen } = this.state;
+    const check = judgeCheck(
+      { files: this.measuredFiles(), comparison: this.comparison },
+      rules,
+      information,
+    );
+    this.set({ check, view: viewCheck(check, information, rules), repaired: null });
     this.repairing?.abort();
     const repairing = new AbortController();
     this.repairing = repairing;
-    const { information, chosen } = this.state;
-    const check = judgeCheck({ files: measured, comparison }, rules, information);
-    this.set({ check, repaired: null });
+    clearTimeout(this.repairTimer);
+    this.repairTimer = setTimeout(
+      () => void this.repair(check, information, chosen, repairing.signal),
+      pauseMs,
+    );
+  }
+
+  private async repair(
+    check: SessionCheck,
+    information: SessionInformation,
+    chosen: readonly ChosenRepair[],
+    signal: AbortSignal,
+  ): Promise<void> {
+    const { rules, files } = this;
     try {
       const worker = await this.sessionWorker();
-      const repaired = await worker.call(
-        'repair',
-        {
-          files,
-          rules,
-          information,
-          check,
-          chosen: [...unaskedRepairs(judgedFindings(check)), ...chosen],
-        },
-        { signal: repairing.signal },
-      );
+      const all = [...unaskedRepairs(judgedFindings(check)), ...chosen];
+      const input = { files, rules, information, check, chosen: all };
+      const repaired = await worker.call('repair', input, { signal });
       const report = await buildReport({ check, repaired, rules, information, engine: 'wasm' });
-      if (!repairing.signal.aborted) this.set({ repaired, report, failure: null });
+      if (!signal.aborted) this.set({ repaired, report, failure: null });
     } catch (failure) {
-      if (!repairing.signal.aborted) this.set({ failure });
+      if (!signal.aborted) this.set({ failure });
     }
   }
+}
+
+/** The same path, length and time of change: the same file, as far as anybody can tell unread. */
+function stampOf({ path, size, file, zipPath }: FileToRead): string {
+  return [path, size, file.lastModified, zipPath ?? ''].join('\n');
+}
+
+/** Loose files replace those of the same name, wherever these lie in the folder; others join. */
+function joinFiles(before: readonly FileToRead[], loose: readonly FileToRead[]): FileToRead[] {
+  const nameOf = (path: string): string => path.slice(path.lastIndexOf('/') + 1).toLowerCase();
+  const joined = [...before];
+  for (const file of loose) {
+    const at = joined.findIndex(({ path }) => nameOf(path) === nameOf(file.path));
+    if (at < 0) joined.push(file);
+    else joined[at] = { ...file, path: joined[at]!.path };
+  }
+  return joined;
 }

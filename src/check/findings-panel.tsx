@@ -4,14 +4,15 @@ import { nextSteps, type NextStep } from '#shared/findings/catalogue/definition.
 import { levels, type Finding, type Level, type RepairKind } from '#shared/findings/finding.ts';
 import { chooseRepair } from '#shared/repair/choose-repairs.ts';
 import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
-import type { CheckReport } from '#shared/report/check-report.ts';
+import { answerKinds, type AnswerKind } from '#shared/session/session-information.ts';
 import { Button } from '../ui/button.tsx';
 import { LevelIcon, levelWords } from '../ui/level-mark.tsx';
 import { TapeLabel } from '../ui/tape-label.tsx';
+import { answerWords } from './answers.ts';
 import { fileName } from './file-name.ts';
 import { repairWords, takenWords } from './repair-words.ts';
-import { allFindings, findingKey } from './report-findings.ts';
 import { clockTime } from './time-axis.ts';
+import { allFindings, findingKey, type ViewedSession } from './viewed-session.ts';
 
 /** Headings of the groups, in the order in which things are best done. */
 const stepHeadings: Record<NextStep, string> = {
@@ -24,15 +25,16 @@ const stepHeadings: Record<NextStep, string> = {
 const stepOrder: readonly NextStep[] = ['we-can-fix', 'export-again', 'decide', 'know'];
 
 type FindingsPanelProps = {
-  report: CheckReport;
+  view: ViewedSession;
   chosen?: readonly ChosenRepair[];
   onChoose?: ((repairs: readonly ChosenRepair[]) => void) | undefined;
   onUndo?: ((repairs: readonly ChosenRepair[]) => void) | undefined;
+  onAnswer?: ((finding: Finding, answer: AnswerKind | null) => void) | undefined;
 };
 
 /** All findings, grouped by what somebody does next about them. */
 export function FindingsPanel(props: FindingsPanelProps) {
-  const findings = allFindings(props.report);
+  const findings = allFindings(props.view);
   if (findings.length === 0) {
     return (
       <p className="px-5 py-6 text-ink-2">
@@ -71,10 +73,11 @@ function FindingGroup({
 
 function FindingItem({
   finding,
-  report,
+  view,
   chosen = [],
   onChoose,
   onUndo,
+  onAnswer,
 }: FindingsPanelProps & { finding: Finding }): ReactNode {
   const { title, what, why, how } = describeFinding(finding);
   const taken = chosen.find((repair) => answersFinding(repair, finding));
@@ -90,7 +93,7 @@ function FindingItem({
           <span className="sr-only">{levelWords[finding.level]}: </span>
           {title}
         </h3>
-        <Place finding={finding} report={report} />
+        <Place finding={finding} view={view} />
         <p className="mt-1.5 text-ink-2">{what}</p>
         <details className="mt-1 text-small text-ink-2">
           <summary className="cursor-pointer py-1 text-ink underline-offset-4 hover:underline">
@@ -99,6 +102,18 @@ function FindingItem({
           <p className="mt-1">{why}</p>
           <p className="mt-1">{how}</p>
         </details>
+        {finding.answer !== null && (
+          <p className="mt-2 flex flex-wrap items-center gap-2 text-small">
+            <span className="font-medium">
+              You said: {answerWords[finding.answer].toLowerCase()}.
+            </span>
+            {onAnswer && (
+              <Button size="small" kind="quiet" onClick={() => onAnswer(finding, null)}>
+                Take it back
+              </Button>
+            )}
+          </p>
+        )}
         {onChoose && (
           <div className="mt-3 flex flex-wrap items-center gap-2">
             {taken ? (
@@ -120,6 +135,9 @@ function FindingItem({
                 </Button>
               ))
             )}
+            {onAnswer && !taken && finding.answer === null && finding.level !== 'note' && (
+              <AnswerButtons onAnswer={(answer) => onAnswer(finding, answer)} />
+            )}
           </div>
         )}
       </div>
@@ -127,10 +145,18 @@ function FindingItem({
   );
 }
 
+function AnswerButtons({ onAnswer }: { onAnswer: (answer: AnswerKind) => void }): ReactNode {
+  return answerKinds.map((answer) => (
+    <Button key={answer} size="small" onClick={() => onAnswer(answer)}>
+      {answerWords[answer]}
+    </Button>
+  ));
+}
+
 /** Which files, and where the first place is. */
-function Place({ finding, report }: { finding: Finding; report: CheckReport }): ReactNode {
+function Place({ finding, view }: { finding: Finding; view: ViewedSession }): ReactNode {
   const [path] = finding.files;
-  const file = report.files.find((candidate) => candidate.path === path);
+  const file = view.files.find((candidate) => candidate.path === path);
   const [first] = finding.ranges;
   const rate = file?.format?.sampleRateHz;
   const more = finding.places > 1 ? ' and on' : '';
@@ -168,9 +194,9 @@ export function anchorOf({ code, files }: Pick<Finding, 'code' | 'files'>): stri
 
 /** "2 to export again, 3 we can fix, 2 to decide": what there is to do, in a line. */
 export function stepCounts(
-  report: CheckReport,
+  view: ViewedSession,
 ): { step: NextStep; count: number; words: string; level: Level }[] {
-  const findings = allFindings(report);
+  const findings = allFindings(view);
   const words: Record<NextStep, string> = {
     'export-again': 'to export again',
     'we-can-fix': 'we can fix',

@@ -5,11 +5,12 @@ import { Button } from '../ui/button.tsx';
 type IntakeProps = {
   onFolder: (folder: DroppedFolder) => void;
   onFailure: (failure: unknown) => void;
+  onSample: () => void;
   children?: ReactNode;
 };
 
 /** The empty bench: a sheet that waits for a folder, with buttons beside the drop. */
-export function Intake({ onFolder, onFailure, children }: IntakeProps) {
+export function Intake({ onFolder, onFailure, onSample, children }: IntakeProps) {
   const dragging = usePageDrop(onFolder, onFailure);
   return (
     <div
@@ -25,13 +26,23 @@ export function Intake({ onFolder, onFailure, children }: IntakeProps) {
         your browser: nothing is uploaded.
       </p>
       <Pickers onFolder={onFolder} />
-      {children}
+      <p className="text-small text-ink-2">
+        No session at hand?{' '}
+        <button type="button" className="text-link py-1" onClick={onSample}>
+          Try it with a sample
+        </button>
+        : fourteen faulty little files, made on the spot.
+      </p>
+      <div className="w-full max-w-2xl border-t border-line pt-5">{children}</div>
     </div>
   );
 }
 
 /** The buttons beside every drop. */
-export function Pickers({ onFolder }: Pick<IntakeProps, 'onFolder'>) {
+export function Pickers({
+  onFolder,
+  quiet = false,
+}: Pick<IntakeProps, 'onFolder'> & { quiet?: boolean }) {
   const folder = useRef<HTMLInputElement>(null);
   const files = useRef<HTMLInputElement>(null);
   const picked = (input: HTMLInputElement): void => {
@@ -41,7 +52,7 @@ export function Pickers({ onFolder }: Pick<IntakeProps, 'onFolder'>) {
   };
   return (
     <div className="flex flex-wrap justify-center gap-3">
-      <Button kind="primary" onClick={() => folder.current?.click()}>
+      <Button kind={quiet ? 'plain' : 'primary'} onClick={() => folder.current?.click()}>
         Choose a folder
       </Button>
       <Button onClick={() => files.current?.click()}>Choose files</Button>

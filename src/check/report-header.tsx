@@ -1,28 +1,29 @@
 import type { ReactNode } from 'react';
-import type { CheckReport } from '#shared/report/check-report.ts';
 import { LevelIcon, type Level } from '../ui/level-mark.tsx';
 import { Figures } from '../ui/figure.tsx';
 import { byteWords } from './byte-words.ts';
 import { stepCounts } from './findings-panel.tsx';
 import { clockTime, secondsPerBar } from './time-axis.ts';
+import type { ViewedSession } from './viewed-session.ts';
 
 type ReportHeaderProps = {
   title: string;
-  report: CheckReport;
-  readingMs?: number | null;
+  view: ViewedSession;
+  /** What the last reading took; a stored report does not say. */
+  reading?: { ms: number; bytes: number } | null;
   children?: ReactNode;
 };
 
 /** The song in a line of figures, and what there is to do in another. */
-export function ReportHeader({ title, report, readingMs = null, children }: ReportHeaderProps) {
+export function ReportHeader({ title, view, reading = null, children }: ReportHeaderProps) {
   return (
     <header className="flex flex-wrap items-end justify-between gap-x-8 gap-y-4 px-4 py-6 sm:px-7">
       <div className="min-w-0">
         <h1 className="text-title">{title}</h1>
-        <Figures items={figuresOf(report, readingMs)} />
+        <Figures items={figuresOf(view, reading)} />
       </div>
       <div className="flex flex-wrap items-center gap-x-5 gap-y-3">
-        {stepCounts(report).map(({ step, count, words, level }) => (
+        {stepCounts(view).map(({ step, count, words, level }) => (
           <StepCount key={step} level={level}>
             {`${String(count)} ${words}`}
           </StepCount>
@@ -42,8 +43,10 @@ function StepCount({ level, children }: { level: Level; children: ReactNode }) {
   );
 }
 
-function figuresOf(report: CheckReport, readingMs: number | null): string[] {
-  const { information, session, files } = report;
+function figuresOf(
+  { information, session, files }: ViewedSession,
+  reading: ReportHeaderProps['reading'],
+): string[] {
   const { tempo, metre } = information;
   const figures: string[] = [];
   if (tempo?.kind === 'fixed') figures.push(`${String(tempo.bpm)} BPM`);
@@ -67,11 +70,8 @@ function figuresOf(report: CheckReport, readingMs: number | null): string[] {
     );
   }
   figures.push(files.length === 1 ? '1 file' : `${String(files.length)} files`);
-  const bytes = files.reduce((sum, file) => sum + file.bytes, 0);
-  figures.push(
-    readingMs === null
-      ? byteWords(bytes)
-      : `${byteWords(bytes)} read in ${(readingMs / 1000).toFixed(1)} s`,
-  );
+  if (reading) {
+    figures.push(`${byteWords(reading.bytes)} read in ${(reading.ms / 1000).toFixed(1)} s`);
+  } else figures.push(byteWords(files.reduce((sum, file) => sum + file.bytes, 0)));
   return figures;
 }

@@ -1,7 +1,9 @@
 import { queryOptions, useQuery } from '@tanstack/react-query';
+import { useMemo } from 'react';
 import { useParams } from 'react-router-dom';
 import { getOverviews, getReport, type StoredReport } from '#shared/api/reports.ts';
 import type { Overview } from '#shared/measure/overview.ts';
+import { defaultRules } from '#shared/rules/starter-sets.ts';
 import { readOverviews } from '#shared/report/stored-overviews.ts';
 import { call } from '../app/api-client.ts';
 import { dayWords } from '../app/moments.ts';
@@ -11,6 +13,7 @@ import { gunzip } from '../browser/gzip.ts';
 import { ErrorNotice, LoadingState } from '../ui/states.tsx';
 import { ReportHeader } from './report-header.tsx';
 import { ReportView } from './report-view.tsx';
+import { inGroupOrder } from './viewed-session.ts';
 
 const noOverviews: ReadonlyMap<string, Overview> = new Map();
 
@@ -44,7 +47,15 @@ export function ReportPage() {
     enabled: stored?.hasOverviews === true,
   });
   usePageTitle(stored?.songTitle ?? 'Report');
-  if (!stored) {
+  const view = useMemo(
+    () =>
+      stored && {
+        ...stored.report,
+        files: inGroupOrder(stored.report.files, defaultRules),
+      },
+    [stored],
+  );
+  if (!stored || !view) {
     return (
       <Page>
         <LoadingState words="Loading the report…" />
@@ -53,12 +64,12 @@ export function ReportPage() {
   }
   return (
     <div className="flex grow flex-col">
-      <ReportHeader title={stored.songTitle} report={stored.report} />
+      <ReportHeader title={stored.songTitle} view={view} />
       <div className="px-4 pb-6 text-small text-ink-2 sm:px-7">
         <p>{provenance(stored)}</p>
         <Differences stored={stored} />
       </div>
-      <ReportView report={stored.report} overviews={overviews ?? noOverviews} />
+      <ReportView view={view} overviews={overviews ?? noOverviews} />
     </div>
   );
 }

@@ -1,31 +1,34 @@
+import type { Finding } from '#shared/findings/finding.ts';
+import type { AnswerKind } from '#shared/session/session-information.ts';
 import type { Overview } from '#shared/measure/overview.ts';
 import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
-import type { CheckReport } from '#shared/report/check-report.ts';
 import { anchorOf, FindingsPanel } from './findings-panel.tsx';
 import { SideBySide } from './side-by-side.tsx';
+import type { ViewedSession } from './viewed-session.ts';
 
 type ReportViewProps = {
-  report: CheckReport;
+  view: ViewedSession;
   overviews: ReadonlyMap<string, Overview>;
   chosen?: readonly ChosenRepair[];
   onChoose?: (repairs: readonly ChosenRepair[]) => void;
   onUndo?: (repairs: readonly ChosenRepair[]) => void;
+  onAnswer?: (finding: Finding, answer: AnswerKind | null) => void;
 };
 
 /** The picture and the findings beside it: on the bench, and of a stored report. */
-export function ReportView({ report, overviews, ...repairs }: ReportViewProps) {
+export function ReportView({ view, overviews, ...repairs }: ReportViewProps) {
   return (
     <div className="grid grow border-t border-line lg:grid-cols-[minmax(0,1fr)_26rem]">
       <div className="bg-sheet px-4 py-6 sm:px-7">
         <h2 className="sr-only">Side by side</h2>
         <SideBySide
-          report={report}
+          view={view}
           overviews={overviews}
           onFinding={(path, code) => showFinding(path, code)}
         />
       </div>
       <aside aria-label="Findings" className="border-line bg-sheet max-lg:border-t lg:border-s">
-        <FindingsPanel report={report} {...repairs} />
+        <FindingsPanel view={view} {...repairs} />
       </aside>
     </div>
   );

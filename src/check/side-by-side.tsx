@@ -1,22 +1,22 @@
 import type { ReactNode } from 'react';
 import type { Overview } from '#shared/measure/overview.ts';
-import type { CheckReport, ReportFile } from '#shared/report/check-report.ts';
 import { LevelIcon } from '../ui/level-mark.tsx';
 import { Strip, StripRuler, StripSheet } from '../ui/strip.tsx';
 import { fileName } from './file-name.ts';
 import { Lane, type TimeView } from './lane.tsx';
 import { clockTime, rulerMarks, type BarGrid } from './time-axis.ts';
+import type { ViewedFile, ViewedSession } from './viewed-session.ts';
 
 type SideBySideProps = {
-  report: CheckReport;
+  view: ViewedSession;
   overviews: ReadonlyMap<string, Overview>;
   /** A mark was pressed: show that finding. */
   onFinding?: (path: string, code: string) => void;
 };
 
 /** The picture: every track from one start line on one time axis, findings at their place. */
-export function SideBySide({ report, overviews, onFinding }: SideBySideProps) {
-  const tracks = report.files.filter((file) => file.format !== null);
+export function SideBySide({ view: session, overviews, onFinding }: SideBySideProps) {
+  const tracks = session.files.filter((file) => file.format !== null);
   const longestSeconds = Math.max(
     ...tracks.map(({ format }) => format!.frames / format!.sampleRateHz),
     0,
@@ -24,7 +24,7 @@ export function SideBySide({ report, overviews, onFinding }: SideBySideProps) {
   const view: TimeView = { startSeconds: 0, endSeconds: longestSeconds || 1 };
   return (
     <StripSheet endLine>
-      <StripRuler marks={rulerMarks(view, barGrid(report))} />
+      <StripRuler marks={rulerMarks(view, barGrid(session))} />
       {tracks.map((file) => (
         <Strip
           key={file.path}
@@ -45,7 +45,7 @@ export function SideBySide({ report, overviews, onFinding }: SideBySideProps) {
 }
 
 type TrackLaneProps = {
-  file: ReportFile;
+  file: ViewedFile;
   overview: Overview | undefined;
   view: TimeView;
   longestSeconds: number;
@@ -62,7 +62,7 @@ function TrackLane({ file, overview, view, longestSeconds }: TrackLaneProps): Re
       )}
       {frames / sampleRateHz < longestSeconds && (
         <div
-          className="missing-sound absolute inset-y-2 end-0"
+          className="strip-missing absolute inset-y-2 end-0"
           style={{ insetInlineStart: `${String(endsAt * 100)}%` }}
         />
       )}
@@ -76,7 +76,7 @@ function Marks({
   view,
   onFinding,
 }: {
-  file: ReportFile;
+  file: ViewedFile;
   view: TimeView;
   onFinding: SideBySideProps['onFinding'];
 }): ReactNode {
@@ -100,7 +100,7 @@ function Marks({
   });
 }
 
-function barGrid({ information }: CheckReport): BarGrid | null {
+function barGrid({ information }: ViewedSession): BarGrid | null {
   const { tempo, metre, startBar } = information;
   const bpm = tempo?.kind === 'fixed' ? tempo.bpm : null;
   return bpm === null ? null : { bpm, beatsPerBar: metre.beats, beatUnit: metre.unit, startBar };

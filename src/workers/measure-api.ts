@@ -1,6 +1,7 @@
 import type { MeasuredFile } from '#shared/session/measured-file.ts';
+import type { FileToRead } from './file-to-read.ts';
 
-export type MeasureInput = { path: string; file: File };
+export type MeasureInput = FileToRead;
 export type MeasureOutput = MeasuredFile;
 
 /** What a measuring worker does: load the engine once, then one file at a time. */

@@ -1,8 +1,8 @@
 import { createMeters } from '#shared/measure/create-meters.ts';
 import type { MeterEngine } from '#shared/measure/meter.ts';
 import { measureHere, type MeasureFile } from '#shared/session/measure-file.ts';
-import { fileOnDisk } from '../browser/file-source.ts';
 import { serveWorker } from './bridge.ts';
+import { droppedFile } from './file-to-read.ts';
 import type { MeasureApi, MeasureOutput } from './measure-api.ts';
 
 let measureFile: MeasureFile | null = null;
@@ -17,13 +17,21 @@ serveWorker<MeasureApi>(
       measureFile = measureHere(engine);
       return Promise.resolve(null);
     },
-    measure({ path, file }, { signal, report }) {
+    measure(file, { signal, report }) {
       const current = previous.then(() => {
         if (!measureFile) throw new Error('load comes before measure');
         let bytes = 0;
-        return measureFile(fileOnDisk(path, file), {
+        let toldAt = 0;
+        return measureFile(droppedFile(file), {
           signal,
-          onBytes: (more) => report((bytes += more)),
+          onBytes: (more) => {
+            bytes += more;
+            // Often enough for a bar to move; a message a block would keep the page busy.
+            const now = performance.now();
+            if (now - toldAt < 100) return;
+            toldAt = now;
+            report(bytes);
+          },
         });
       });
       previous = current.catch(() => undefined);

@@ -1,17 +1,18 @@
 import type { RepairedSession, SessionCheck } from '#shared/check.ts';
+import type { FileToRead } from './file-to-read.ts';
 import type { Comparison } from '#shared/compare/comparison.ts';
 import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
 import type { CheckReport } from '#shared/report/check-report.ts';
 import type { HouseRules } from '#shared/rules/house-rules.ts';
 import type { MeasuredFile } from '#shared/session/measured-file.ts';
+import type { ZipProblem } from '#shared/bytes/zip-source.ts';
 import type { SessionInformation } from '#shared/session/session-information.ts';
-
-/** A dropped file as it crosses to a worker: the File itself is only a handle. */
-export type FileToRead = { path: string; file: File };
 
 /** Where the zip goes: into a file somebody picked, or through a port into a download. */
 export type ZipSink =
   { kind: 'picked-file'; handle: FileSystemFileHandle } | { kind: 'port'; port: MessagePort };
+
+export type ListedZip = { files: { path: string; size: number }[]; problems: ZipProblem[] };
 
 export type PackOutput = {
   bytes: number;
@@ -25,6 +26,8 @@ export type PackProgress = { step: 'writing' | 'verifying'; bytes: number };
 /** What the session worker does: everything that reads files again once they are measured. */
 export type SessionApi = {
   load: { input: WebAssembly.Module; progress: never; output: null };
+  /** What is in a dropped zip. Throws AppError `zip-refused`. */
+  listZip: { input: File; progress: never; output: ListedZip };
   compare: {
     input: { files: FileToRead[]; measured: MeasuredFile[] };
     progress: never;

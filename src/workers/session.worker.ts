@@ -6,21 +6,25 @@ import { compareFiles } from '#shared/session/compare-files.ts';
 import { measureHere, type MeasureFile } from '#shared/session/measure-file.ts';
 import { writeToPickedFile } from '../browser/write-picked-file.ts';
 import { loadChecksums } from '../browser/checksums.ts';
-import { fileOnDisk } from '../browser/file-source.ts';
 import { loadSheetFont } from '../browser/load-sheet-font.ts';
 import { serveWorker } from './bridge.ts';
-import type { FileToRead, SessionApi } from './session-api.ts';
+import { droppedFile, listZip, type FileToRead } from './file-to-read.ts';
+import type { SessionApi } from './session-api.ts';
 import { sendThroughPort } from './stream-port.ts';
 
 let measureFile: MeasureFile | null = null;
 let prepared: Package | null = null;
 
-const dropped = (files: FileToRead[]) => files.map(({ path, file }) => fileOnDisk(path, file));
+const dropped = (files: FileToRead[]) => files.map(droppedFile);
 
 serveWorker<SessionApi>({
   load(module) {
     measureFile = measureHere(createMeters(module));
     return Promise.resolve(null);
+  },
+  async listZip(file) {
+    const { files, problems } = await listZip(file);
+    return { files: files.map(({ path, size }) => ({ path, size })), problems };
   },
   compare({ files, measured }, { signal }) {
     return compareFiles(measured, dropped(files), signal);

@@ -1,0 +1,63 @@
+import type { RepairedSession, SessionCheck } from '#shared/check.ts';
+import type { Finding } from '#shared/findings/finding.ts';
+import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
+import type { CheckReport } from '#shared/report/check-report.ts';
+import {
+  emptySessionInformation,
+  type SessionInformation,
+} from '#shared/session/session-information.ts';
+import type { ViewedSession } from './viewed-session.ts';
+
+export type BenchPhase = 'waiting' | 'making-sample' | 'measuring' | 'comparing' | 'checked';
+
+export type ReadingProgress = {
+  bytesDone: number;
+  bytes: number;
+  filesDone: number;
+  files: number;
+  startedAt: number;
+  /** Bytes read of the files whose turn it is, by path. */
+  current: ReadonlyMap<string, number>;
+};
+
+/** Something that was dropped and could not be taken in, with the reason in words. */
+export type IntakeProblem = { path: string; reason: string };
+
+/** Everything the screen shows; a new object at every change. */
+export type BenchState = {
+  phase: BenchPhase;
+  folderName: string | null;
+  problems: readonly IntakeProblem[];
+  progress: ReadingProgress | null;
+  /** Milliseconds the last reading took and bytes it read; null until it is over. */
+  reading: { ms: number; bytes: number } | null;
+  information: SessionInformation;
+  chosen: readonly ChosenRepair[];
+  /** What is found so far; complete once the phase is `checked`. */
+  check: SessionCheck | null;
+  view: ViewedSession | null;
+  /** What the chosen repairs make, and the report of it; null while that is worked out. */
+  repaired: RepairedSession | null;
+  report: CheckReport | null;
+  failure: unknown;
+};
+
+export const waitingBench: BenchState = {
+  phase: 'waiting',
+  folderName: null,
+  problems: [],
+  progress: null,
+  reading: null,
+  information: emptySessionInformation(),
+  chosen: [],
+  check: null,
+  view: null,
+  repaired: null,
+  report: null,
+  failure: null,
+};
+
+/** Every finding of a check, whatever it is about. */
+export function judgedFindings({ judgement }: SessionCheck): Finding[] {
+  return [...judgement.files.flatMap(({ findings }) => findings), ...judgement.session.findings];
+}

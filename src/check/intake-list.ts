@@ -1,0 +1,51 @@
+import type { ZipProblem } from '#shared/bytes/zip-source.ts';
+import { withoutCommonFolder } from '#shared/session/common-folder.ts';
+import { isJunk } from '#shared/session/junk-files.ts';
+import type { DroppedFolder } from '../browser/dropped-files.ts';
+import type { FileToRead } from '../workers/file-to-read.ts';
+import type { SessionWorker } from '../workers/session-link.ts';
+import type { IntakeProblem } from './bench-state.ts';
+
+type IntakeList = { folderName: string | null; files: FileToRead[]; problems: IntakeProblem[] };
+
+/** Lists what was dropped: a folder, files, or the inside of a zip. Throws `zip-refused`. */
+export async function listIntake(
+  { folderName, files }: DroppedFolder,
+  openWorker: () => Promise<SessionWorker>,
+  signal: AbortSignal,
+): Promise<IntakeList> {
+  const [only] = files;
+  if (files.length !== 1 || !only || !/\.zip$/i.test(only.path)) {
+    const listed = files.map(({ path, file }) => ({ path, size: file.size, file }));
+    return { folderName, files: listed, problems: [] };
+  }
+  const worker = await openWorker();
+  const zip = await worker.call('listZip', only.file, { signal });
+  const entries = zip.files.map(({ path, size }) => ({
+    path,
+    size,
+    file: only.file,
+    zipPath: path,
+  }));
+  return {
+    folderName: only.file.name.replace(/\.zip$/i, ''),
+    files: withoutCommonFolder(entries, isJunk),
+    problems: zip.problems.map(({ path, reason }) => ({ path, reason: zipReasons[reason] })),
+  };
+}
+
+const zipReasons: Record<ZipProblem['reason'], string> = {
+  'absolute-path': 'its name leads out of the folder',
+  'parent-folder': 'its name leads out of the folder',
+  'drive-letter': 'its name leads out of the folder',
+  backslash: 'its name holds a backslash',
+  'nul-in-name': 'it has no usable name',
+  'no-name': 'it has no usable name',
+  symlink: 'a link is not followed',
+  'special-file': 'it is no ordinary file',
+  encrypted: 'it is encrypted',
+  'nested-zip': 'a zip within a zip is not opened',
+  'unknown-compression': 'it is packed in a way that cannot be read here',
+  'name-repeated': 'another file in the zip has the same name',
+  'damaged-entry': 'the zip is damaged there',
+};
