@@ -44,6 +44,11 @@ export default tseslint.config(
     },
   },
   {
+    // Served as they are, without a build.
+    files: ['src/public/**/*.js'],
+    languageOptions: { globals: { document: 'readonly', localStorage: 'readonly' } },
+  },
+  {
     // Import zones: shared knows nobody, client and server know shared, nobody knows tests.
     plugins: { 'import-x': importX },
     files: ['**/*.{ts,tsx}'],
