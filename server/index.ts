@@ -3,7 +3,8 @@ import { createServer, type Server } from 'node:http';
 import { createApp } from './app.ts';
 import { systemClock } from './clock.ts';
 import { openDatabase } from './db/client.ts';
-import { readEnv, type Env } from './env.ts';
+import { isConnectionLost } from './db/failures.ts';
+import { EnvironmentProblem, readEnv, type Env } from './env.ts';
 import { jobQueue } from './jobs/queue.ts';
 import { createTasks, startJobWorker } from './jobs/worker.ts';
 import { createLog } from './log.ts';
@@ -58,15 +59,34 @@ async function serve(env: Env): Promise<void> {
 async function closeServer(server: Server): Promise<void> {
   const closed = once(server, 'close');
   server.close();
-  server.closeIdleConnections();
+  // A browser keeps its connection open after the last answer; without this we wait for it.
+  const sweep = setInterval(() => server.closeIdleConnections(), 50);
   const timer = setTimeout(() => server.closeAllConnections(), shutdownLimitMs);
   await closed;
+  clearInterval(sweep);
   clearTimeout(timer);
+}
+
+/** One sentence for what a person can put right; null for a bug. */
+function explainStart(error: unknown): string | null {
+  if (error instanceof EnvironmentProblem) return error.message;
+  if (isConnectionLost(error)) return 'PostgreSQL does not answer where DATABASE_URL points.';
+  const code = (error as { code?: unknown } | null)?.code;
+  if (code === 'EADDRINUSE') return 'Another program uses the port; choose another with PORT.';
+  if (code === 'EACCES') return 'This user may not use the port; choose one above 1023 with PORT.';
+  if (code === 'EADDRNOTAVAIL') return 'HOST is no address of this machine.';
+  if (code === '3D000') return 'PostgreSQL has no database of the name in DATABASE_URL.';
+  if (typeof code === 'string' && code.startsWith('28')) {
+    return 'PostgreSQL does not accept the user and password in DATABASE_URL.';
+  }
+  return null;
 }
 
 try {
   await serve(readEnv(process.env));
 } catch (error) {
-  console.error(error instanceof Error ? error.message : error);
-  process.exitCode = 1;
+  const sentence = explainStart(error);
+  console.error(sentence ? `The server cannot start. ${sentence}` : error);
+  // Half of it may be running already.
+  process.exit(1);
 }
