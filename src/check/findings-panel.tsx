@@ -7,6 +7,7 @@ import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
 import { answerKinds, type AnswerKind } from '#shared/session/session-information.ts';
 import { Button } from '../ui/button.tsx';
 import { LevelIcon, levelWords } from '../ui/level-mark.tsx';
+import { Menu, MenuItem } from '../ui/menu.tsx';
 import { TapeLabel } from '../ui/tape-label.tsx';
 import { answerWords } from './answers.ts';
 import { fileName } from './file-name.ts';
@@ -136,7 +137,7 @@ function FindingItem({
               ))
             )}
             {onAnswer && !taken && finding.answer === null && finding.level !== 'note' && (
-              <AnswerButtons onAnswer={(answer) => onAnswer(finding, answer)} />
+              <AnswerMenu onAnswer={(answer) => onAnswer(finding, answer)} />
             )}
           </div>
         )}
@@ -145,12 +146,16 @@ function FindingItem({
   );
 }
 
-function AnswerButtons({ onAnswer }: { onAnswer: (answer: AnswerKind) => void }): ReactNode {
-  return answerKinds.map((answer) => (
-    <Button key={answer} size="small" onClick={() => onAnswer(answer)}>
-      {answerWords[answer]}
-    </Button>
-  ));
+function AnswerMenu({ onAnswer }: { onAnswer: (answer: AnswerKind) => void }): ReactNode {
+  return (
+    <Menu align="start" trigger={<Button size="small">Answer</Button>}>
+      {answerKinds.map((answer) => (
+        <MenuItem key={answer} onSelect={() => onAnswer(answer)}>
+          {answerWords[answer]}
+        </MenuItem>
+      ))}
+    </Menu>
+  );
 }
 
 /** Which files, and where the first place is. */

@@ -1,16 +1,20 @@
-import { useRef, useState, type ReactNode } from 'react';
+import { useState, type ReactNode } from 'react';
 import { AppError } from '#shared/errors.ts';
+import { describeFinding } from '#shared/findings/catalogue/describe-finding.ts';
+import type { Finding } from '#shared/findings/finding.ts';
 import type { CheckReport } from '#shared/report/check-report.ts';
 import { ErrorPanel } from '../app/error-panel.tsx';
 import { Button } from '../ui/button.tsx';
-import { Dialog } from '../ui/dialog.tsx';
+import { AlertDialog, Dialog } from '../ui/dialog.tsx';
 import { Progress } from '../ui/progress.tsx';
 import { TapeLabel } from '../ui/tape-label.tsx';
 import type { PackOutput, PackProgress } from '../workers/session-api.ts';
 import type { Bench } from './bench.ts';
 import { byteWords } from './byte-words.ts';
+import { fileName } from './file-name.ts';
 import { PackingList } from './packing-list.tsx';
 import { hasSavePicker, pickZip, saveZip } from './save-zip.ts';
+import { findingKey } from './viewed-session.ts';
 
 type SaveBarProps = { bench: Bench; report: CheckReport; children?: ReactNode };
 
@@ -22,11 +26,14 @@ export function SaveBar({ bench, report, children }: SaveBarProps) {
   const [saving, setSaving] = useState<Saving | null>(null);
   const [saved, setSaved] = useState<(PackOutput & { picked: boolean }) | null>(null);
   const [failure, setFailure] = useState<unknown>(null);
-  const status = useRef<HTMLParagraphElement>(null);
+  const [asking, setAsking] = useState(false);
   const fileName = `${report.package.folderName}.zip`;
   const total = packedBytes(report);
 
+  const mustFix = report.package.findings.filter(({ level }) => level === 'must-fix');
+
   const save = async (): Promise<void> => {
+    setAsking(false);
     const handle = hasSavePicker() ? await pickZip(fileName) : null;
     if (hasSavePicker() && handle === null) return;
     const abort = new AbortController();
@@ -51,7 +58,7 @@ export function SaveBar({ bench, report, children }: SaveBarProps) {
       {failure !== null && <ErrorPanel error={failure} />}
       {saving && <SavingProgress {...saving} />}
       {saved && (
-        <p ref={status} role="status" className="mb-2 text-small">
+        <p role="status" className="mb-2 text-small">
           {savedWords(saved)}
         </p>
       )}
@@ -67,12 +74,26 @@ export function SaveBar({ bench, report, children }: SaveBarProps) {
             kind="primary"
             busy={saving !== null}
             busyWords="Saving…"
-            onClick={() => void save()}
+            onClick={() => (mustFix.length > 0 ? setAsking(true) : void save())}
           >
             Save the zip
           </Button>
         </div>
       </div>
+      <AlertDialog
+        open={asking}
+        onOpenChange={setAsking}
+        title={
+          mustFix.length === 1
+            ? 'One thing still must be fixed'
+            : `${String(mustFix.length)} things still must be fixed`
+        }
+        description={<MustFixList findings={mustFix} />}
+        kind="primary"
+        confirmWords="Save it all the same"
+        cancelWords="Go back"
+        onConfirm={() => void save()}
+      />
       <Dialog
         wide
         open={listShown}
@@ -83,6 +104,24 @@ export function SaveBar({ bench, report, children }: SaveBarProps) {
         <PackingList report={report} />
       </Dialog>
     </footer>
+  );
+}
+
+/** What is left, so that nobody sends it without knowing; the report says it too. */
+function MustFixList({ findings }: { findings: readonly Finding[] }) {
+  return (
+    <>
+      The engineer will see these in the report:{' '}
+      {findings.map((finding) => {
+        const names = finding.files.slice(0, 3).map(fileName).join(', ');
+        const { title } = describeFinding(finding);
+        return (
+          <span key={findingKey(finding)} className="mt-1 block text-ink">
+            {names === '' ? title : `${names}: ${title}`}
+          </span>
+        );
+      })}
+    </>
   );
 }
 

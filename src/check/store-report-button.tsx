@@ -7,6 +7,7 @@ import type { CheckReport } from '#shared/report/check-report.ts';
 import { errorText } from '../app/error-text.ts';
 import { useSession } from '../app/session-query.ts';
 import { Button } from '../ui/button.tsx';
+import { downloadReport } from './download-report.ts';
 import { storeCheck } from './store-report.ts';
 
 type StoreReportProps = {
@@ -41,7 +42,7 @@ export function StoreReport({
       }),
     onSuccess: () => queries.invalidateQueries(),
   });
-  if (!user) return null;
+  if (!user) return <Button onClick={() => downloadReport(report)}>Download the report</Button>;
   if (storing.data) {
     return (
       <span role="status" className="self-center text-small">
