@@ -9,6 +9,8 @@ type Hit = {
   standing: 'sure' | 'unsure' | 'misspelt';
   /** The word could also describe another instrument. */
   describes: boolean;
+  /** The word says what is played rather than who plays it: oohs. */
+  tellsMore: boolean;
 };
 
 export type Head = {
@@ -42,7 +44,8 @@ function hitOf(words: readonly Word[], index: number, hint: GroupNature | null):
   if (!best) return null;
   const describes =
     best.instrument.detail !== null || word.meanings.some((m) => m.kind === 'detail');
-  return { index, instrument: best.instrument, standing: best.standing, describes };
+  const { instrument, standing, adds } = best;
+  return { index, instrument, standing, describes, tellsMore: adds !== null };
 }
 
 /** The hits that name an instrument most plainly; empty only if there is no hit at all. */
@@ -97,7 +100,7 @@ export function chooseHead(words: readonly Word[], hint: GroupNature | null): He
     const heading = general.nature !== 'vocals';
     const narrower = hits.find(
       (hit) =>
-        (hit.standing === 'unsure' || heading) &&
+        (heading || (hit.standing === 'unsure' && !hit.tellsMore)) &&
         hit.instrument.nature === general.nature &&
         !hit.instrument.general,
     );

@@ -42,14 +42,14 @@ export const drums: readonly InstrumentEntry[] = [
   {
     written: 'Tom',
     short: 'Tom',
-    forms: 'tom, tom tom, rack tom, tom rack, rack, haenge tom, hanger tom, mid tom +Mid',
+    forms: 'tom, tom tom, rack tom, tom rack, haenge tom, hanger tom, mid tom +Mid',
     misspelt: 'tohm, rck tom, racktm',
-    unsure: 'rk, rt, tm, t',
+    unsure: 'rack, rk, rt, tm, t',
   },
   {
     written: 'Floor Tom',
     short: 'FTom',
-    forms: `floor tom, flr tom, fl tom, f tom, tom floor, tom flr, stand tom, tom basse, goliat,
+    forms: `floor tom, flr tom, fl tom, f tom, tom fl, tom floor, tom flr, stand tom, tom basse, goliat,
       floor tm, timbal base`,
     misspelt: 'flor tom, flortom, floortm, floot tom',
     unsure: 'floor, flr, ft, timpano',
@@ -81,7 +81,8 @@ export const drums: readonly InstrumentEntry[] = [
   {
     written: 'Crash',
     short: 'Crsh',
-    forms: 'crash, crash cymbal, crash cym, crsh, crash becken',
+    forms:
+      'crash, crash cymbal, crash cym, crsh, crash becken, (rev|reverse|reversed) crash +Reverse',
     misspelt: 'crahs, crach',
     unsure: 'cr',
   },
@@ -91,7 +92,7 @@ export const drums: readonly InstrumentEntry[] = [
     written: 'Cymbal',
     short: 'Cym',
     forms: `cymbal, cym, cymb, becken, platillo, platillos, cymbale, piatto, piatti,
-      (rev|reverse|reversed) (cymbal|cym|crash) +Reverse, (cym|cymbal) (swell|roll) +Swell`,
+      (rev|reverse|reversed) (cymbal|cym) +Reverse, (cym|cymbal) (swell|roll) +Swell`,
     misspelt: 'cymball, cimbal, symbal, cymbl, simbal',
     unsure: 'cy',
   },
@@ -108,7 +109,8 @@ export const drums: readonly InstrumentEntry[] = [
     forms: `drums, drum, drum kit, drum set, drm, drms, schlagzeug, batterie, bateria, batteria,
       drum machine, drum programming, programmed drums, e drums, electronic drums`,
     misspelt: 'durms, drusm',
-    unsure: 'dr, kit, batt, beat, beats, trommeln',
+    unsure: `dr, kit, batt, beat, beats, trommeln, front of kit +Front, fok +Front,
+      (knee|crotch) mic +Knee, trash mic`,
     general: true,
   },
 ];

@@ -12,8 +12,9 @@ export const effects: readonly InstrumentEntry[] = [
   {
     written: 'Riser',
     short: 'Rise',
+    unsure: 'rise',
     forms:
-      'riser, risers, rise, uplifter, up lifter, build up, buildup fx, white noise riser, noise riser',
+      'riser, risers, uplifter, up lifter, build up, buildup fx, white noise riser, noise riser',
   },
   {
     written: 'Downlifter',
@@ -24,7 +25,8 @@ export const effects: readonly InstrumentEntry[] = [
   {
     written: 'Impact',
     short: 'Impt',
-    forms: 'impact, impacts, impt, boom, booms, sub boom, sub drop, hit fx, fx hit, sub hit',
+    unsure: 'boom, booms',
+    forms: 'impact, impacts, impt, sub boom, sub drop, hit fx, fx hit, sub hit',
     detail: 'Impact',
   },
   { written: 'Sweep', short: 'Swp', forms: 'sweep, sweeps, swp, noise sweep, fx sweep' },
@@ -47,9 +49,9 @@ export const effects: readonly InstrumentEntry[] = [
     written: 'Reverb',
     short: 'Verb',
     forms:
-      'reverb, verb, rvb, reverbs, hall reverb, plate reverb, room reverb, spring reverb, plate, plate verb, hall verb, room verb, spring verb, riverbero, hall, nachhall',
+      'reverb, verb, rvb, reverbs, hall reverb, plate reverb, room reverb, spring reverb, plate, plate verb, hall verb, room verb, spring verb, riverbero, nachhall',
     misspelt: 'revreb, rverb, revereb',
-    unsure: 'rev',
+    unsure: 'rev, hall',
     detail: 'Reverb',
   },
   {
@@ -65,7 +67,7 @@ export const effects: readonly InstrumentEntry[] = [
     written: 'Ambience',
     short: 'Amb',
     forms:
-      'atmos, atmo, atmosphere, soundscape, scape, field recording, field rec, nature sounds, room tone',
+      'atmos, atmo, atmosphere, soundscape, field recording, field rec, nature sounds, room tone',
     unsure: 'ambience, amb, ambient, texture, textures',
     detail: 'Ambience',
   },
@@ -74,7 +76,7 @@ export const effects: readonly InstrumentEntry[] = [
   {
     written: 'Turntable',
     short: 'TTbl',
-    forms: 'turntable, turntables, dj scratch, dj scratches, scratches, t tbl, dj',
+    forms: 'turntable, turntables, dj scratch, dj scratches, scratches, t tbl',
   },
   { written: 'Swell', short: 'Swll', forms: 'swell, swells, swll', detail: 'Swell' },
   { written: 'Transition', short: 'Trns', forms: 'transition, transitions, trns' },

@@ -4,10 +4,10 @@ export const keys: readonly InstrumentEntry[] = [
   {
     written: 'Electric Piano',
     short: 'EP',
-    forms: `(electric|elec|elect|el|e|electr|elektro) (piano|pno|pn), ep, e p, piano electrique,
+    forms: `(electric|elec|elect|el|e|electr|elektro) (piano|pno|pn), e p, piano electrique,
       piano electrico, piano elettrico, (piano|pno) (elec|electric)`,
     misspelt: 'eletric piano, elecric piano',
-    unsure: 'epn',
+    unsure: 'ep, epn',
   },
   {
     written: 'Toy Piano',
@@ -49,10 +49,10 @@ export const keys: readonly InstrumentEntry[] = [
   {
     written: 'Keys',
     short: 'Keys',
-    forms: `keys, keyboard, keyboards, kys, kbd, kb, keybd, teclado, teclados, clavier, claviers,
+    forms: `keys, keyboard, keyboards, kys, kbd, keybd, teclado, teclados, clavier, claviers,
       tastiera, tastiere, tasten, key board`,
     misspelt: 'kyes, kesy, keyborad, kybd',
-    unsure: 'ky',
+    unsure: 'ky, kb',
     general: true,
   },
 ];

@@ -25,7 +25,7 @@ export const roleWords: readonly { role: FileRole; sure: boolean; forms: string 
     sure: false,
     forms: `mix, full mix, 2 mix, two mix, 2 track, two track, master, mastered, mstr, mix print, print,
       stereo mix, demo, demo mix, maqueta, maquette, provino, instrumental, inst, instr, tv mix, tv track, playback, mezcla,
-      main mix, main out, mix bus, 2 bus, stereo out, master out, premaster, pre master, minus one`,
+      main mix, main out, backing track, backing tracks, mix bus, 2 bus, stereo out, master out, premaster, pre master, minus one`,
   },
   {
     role: 'reference',
@@ -50,7 +50,7 @@ export const leftoverWords: Readonly<Partial<Record<LeftoverKind, string>>> = {
   'export-word': `track, trk, tr, trak, spur, piste, pista, audio, aud, audio track, channel, chan, canal, kanal,
     ch, file, region, clip, untitled, unnamed, unbenannt, sans titre, sin titulo, consolidated, consolidate, consol, cons, bounce,
     bounced, bnc, bip, bounced in place, bounce in place, render, rendered, rendering, renders, export,
-    exported, exports, freeze, frozen, merged, merge, glued, flattened, flatten, flat, rec, recording,
+    exported, exports, freeze, frozen, merged, merge, glued, voice memo, voice memos, memo, flattened, flatten, flat, rec, recording,
     recorded, record, stem, stems, multitrack, multitracks, multi track, wav, wave, aif, aiff,
     session, project, output, inst track, midi, instrument track, from zero, from start`,
   version: `final, finale, finals, finished, final version, new, neu, nuevo, nueva, nouveau, nuovo,

@@ -6,7 +6,7 @@ export const synths: readonly InstrumentEntry[] = [
   {
     written: 'Synth Lead',
     short: 'SyLd',
-    forms: `${synth} (lead|ld|leads), (lead|ld) ${synth}, sy ld, ${synth} solo`,
+    forms: `${synth} (lead|ld|leads), (lead|ld) ${synth}, sy ld, ${synth} solo, (saw|square|sine) lead`,
   },
   {
     written: 'Synth Strings',

@@ -17,13 +17,13 @@ export const vocals: readonly InstrumentEntry[] = [
   {
     written: 'Backing Vocal',
     short: 'BV',
-    forms: `(backing|back|backings|background|backgrounds|bg|bgd|bk|bkg|bkgd|bck|bkng|backup|back up|b|chor|coro)
-      ${vocal}, ${vocal} (backing|bg|back|background|bkg|bgs), bv, bvs, bgv, bgvs, b v, bv x, bgvx, bgvox,
-      backing, backings, backgrounds, coros, cori, choeurs, choeur, coristas, backup singer, backup singers,
+    forms: `(backing|back|backings|background|backgrounds|bg|bgd|bk|bkg|bkgd|bck|bkng|backup|back up|b)
+      ${vocal}, ${vocal} (backing|bg|back|background|bkg|bgs), bv, bvs, bgv, bgvs, b v, bv x, bgvx, bgvox, backings, backgrounds, coros, cori, choeurs, choeur, coristas, backup singer, backup singers,
       backing singer, backing choir, bg gesang, background gesang, backgrounds gesang, hintergrund gesang,
-      chor gesang, chorus (vox|voc|vocal|vocals) +Chorus`,
+      chor gesang`,
     misspelt: 'backing (vocla|voacl|vocasl), baking vocals, bakcing vocals, backin vox',
-    unsure: 'bg, bgs, bkg, bck, background, backs, bks, chorus vocals',
+    unsure:
+      'bg, bgs, bkg, bck, background, backs, bks, backing, ooh +Ooh, oohs +Ooh, aah +Aah, aahs +Aah, ahs +Aah, ahhs +Aah',
   },
   {
     written: 'Gang Vocal',
