@@ -4,7 +4,7 @@ import { judgeSession, type Judgement } from './judge/judge-session.ts';
 import type { ChecksumEngine } from './pack/checksums.ts';
 import { packFiles, type Package } from './pack/pack-entries.ts';
 import { listPackedFiles } from './pack/packing-list.ts';
-import { followComparison, followRepairs } from './repair/follow-repairs.ts';
+import { followComparison, followRepairs, keepUnpacked } from './repair/follow-repairs.ts';
 import { droppedTracks, measureEntries } from './repair/measure-entries.ts';
 import { planRepairs } from './repair/plan-repairs.ts';
 import { keepsSamples } from './repair/render-entry.ts';
@@ -81,7 +81,10 @@ export async function repairSession(
     rules,
     followRepairs(information, plan),
   );
-  return { plan, after };
+  return {
+    plan,
+    after: { ...after, judgement: keepUnpacked(after.judgement, check.judgement, plan) },
+  };
 }
 
 export type PackInput = {

@@ -2,6 +2,7 @@ import { readFile, stat } from 'node:fs/promises';
 import { resolve } from 'node:path';
 import { checkSession, packSession, repairSession, type CheckInput } from '#shared/check.ts';
 import { AppError } from '#shared/errors.ts';
+import { allFindings } from '#shared/judge/all-findings.ts';
 import { safeRepairs, unaskedRepairs } from '#shared/repair/choose-repairs.ts';
 import { buildReport } from '#shared/report/build-report.ts';
 import type { CheckReport } from '#shared/report/check-report.ts';
@@ -94,8 +95,7 @@ async function checkAndPack(
   if (check.files.every(({ reading }) => reading.kind === 'not-audio')) {
     throw new AppError('nothing-to-check', { path: args.target });
   }
-  const { files, session } = check.judgement;
-  const findings = [...files.flatMap((file) => file.findings), ...session.findings];
+  const findings = allFindings(check.judgement);
   const chosen = args.repairSafe ? safeRepairs(findings) : unaskedRepairs(findings);
   const repaired = await repairSession(input, check, chosen, watch('Repairing'));
   const report = await buildReport({

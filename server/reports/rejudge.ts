@@ -1,7 +1,8 @@
-import { judgeSession, judgeVersion, type Judgement } from '#shared/judge/judge-session.ts';
+import { judgeSession, judgeVersion } from '#shared/judge/judge-session.ts';
 import type { JudgedFile } from '#shared/judge/judged-session.ts';
 import { measureVersion } from '#shared/measure/measures.ts';
-import { followRepairs } from '#shared/repair/follow-repairs.ts';
+import { allFindings } from '#shared/judge/all-findings.ts';
+import { followRepairs, keepUnpacked } from '#shared/repair/follow-repairs.ts';
 import { entryFolders, type RepairPlan } from '#shared/repair/repair-plan.ts';
 import type { CheckReport, ReportEntry } from '#shared/report/check-report.ts';
 import type { HouseRules } from '#shared/rules/house-rules.ts';
@@ -25,19 +26,19 @@ export function rejudge(report: CheckReport, rules: HouseRules): Rejudgement | n
 
   const { files, session, information } = report;
   const dropped = judgeSession({ files, comparison: session.comparison }, rules, information);
+  const plan = planOf(report);
   const packed = judgeSession(
     {
       files: packedFiles(report),
       comparison: report.package.comparison ?? session.comparison,
     },
     rules,
-    followRepairs(information, planOf(report)),
+    followRepairs(information, plan),
   );
-  return { dropped: allFindings(dropped), packed: allFindings(packed) };
-}
-
-function allFindings({ files, session }: Judgement): Finding[] {
-  return [...files.flatMap(({ findings }) => findings), ...session.findings];
+  return {
+    dropped: allFindings(dropped),
+    packed: allFindings(keepUnpacked(packed, dropped, plan)),
+  };
 }
 
 /** The entries as files: where no repair made other audio, they are what their source is. */

@@ -1,4 +1,8 @@
 import type { Comparison } from '../compare/comparison.ts';
+import { apart } from '../findings/shared-line.ts';
+import { allFindings } from '../judge/all-findings.ts';
+import type { Judgement } from '../judge/judge-session.ts';
+import { countLevels, verdictOf } from '../judge/verdict.ts';
 import type { SessionInformation } from '../session/session-information.ts';
 import type { RepairPlan } from './repair-plan.ts';
 import { fileNameOf, splitExtension } from '../pack/safe-names.ts';
@@ -59,4 +63,30 @@ export function followComparison(comparison: Comparison, plan: RepairPlan): Comp
       return left && right ? [{ ...sides, left, right }] : [];
     }),
   };
+}
+
+/**
+ * What was found in files that cannot be packed stays open: a track that is damaged or compressed
+ * is missing in the package, and nothing in the package says so. Their names no longer matter.
+ */
+export function keepUnpacked(
+  after: Judgement,
+  before: Judgement,
+  { leftOut }: Pick<RepairPlan, 'leftOut'>,
+): Judgement {
+  const unpacked = new Set(
+    leftOut.filter(({ reason }) => reason === 'not-packable').map(({ path }) => path),
+  );
+  const kept = allFindings(before)
+    .flatMap(apart)
+    .filter(
+      ({ files, repairs }) =>
+        files.length > 0 &&
+        files.every((path) => unpacked.has(path)) &&
+        !repairs.includes('rename'),
+    );
+  if (kept.length === 0) return after;
+  const session = { ...after.session, findings: [...after.session.findings, ...kept] };
+  const findings = allFindings({ files: after.files, session });
+  return { ...after, session, verdict: verdictOf(findings), counts: countLevels(findings) };
 }

@@ -1,3 +1,4 @@
+import { allFindings } from '../judge/all-findings.ts';
 import type { Judgement } from '../judge/judge-session.ts';
 import {
   checksumFileName,
@@ -65,10 +66,7 @@ export function planRepairs(input: PlanInput): RepairPlan {
     } else leftOut.push({ path, reason: 'not-packable' });
   }
 
-  const findings = [
-    ...judgement.files.flatMap((file) => file.findings),
-    ...judgement.session.findings,
-  ];
+  const findings = allFindings(judgement);
   const drafted = draftEntries(tracks, findings, chosen);
   const names = nameDrafts(drafted.drafts, input.rules.names, input.information);
   const aiffs = new Set(

@@ -1,5 +1,6 @@
 import type { SessionCheck, RepairedSession } from '../check.ts';
 import type { Finding } from '../findings/finding.ts';
+import { allFindings } from '../judge/all-findings.ts';
 import { judgeVersion } from '../judge/judge-session.ts';
 import { measureVersion } from '../measure/measures.ts';
 import { folderName } from '../naming/folder-name.ts';
@@ -60,10 +61,7 @@ export async function buildReport(input: ReportInput): Promise<CheckReport> {
         reportEntry(entry, describeRepairs(entry, plan, check.files), after.files[index]!),
       ),
       leftOut: plan.leftOut,
-      findings: [
-        ...after.judgement.files.flatMap(({ findings }) => findings),
-        ...after.judgement.session.findings,
-      ],
+      findings: allFindings(after.judgement),
       comparison: after.comparison,
     },
     counts: after.judgement.counts,

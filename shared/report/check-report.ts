@@ -58,8 +58,8 @@ export const reportEntrySchema = z.strictObject({
 });
 export type ReportEntry = z.infer<typeof reportEntrySchema>;
 
-/** What was left away so that the report stays within its size. */
-export const shortenings = ['nothing', 'places', 'measures'] as const;
+/** What was left away so that the report stays within its size; each step includes the ones before. */
+export const shortenings = ['nothing', 'places', 'measures', 'files'] as const;
 
 export const checkReportSchema = z.strictObject({
   schema: z.literal(reportSchemaVersion),
@@ -96,7 +96,6 @@ export const checkReportSchema = z.strictObject({
   }),
   /** Findings that remain, by level. */
   counts: z.record(z.enum(levels), z.number().int().nonnegative()),
-  /** What had to be left away to keep the report small: the places, or measures altogether. */
   shortened: z.enum(shortenings),
 });
 export type CheckReport = z.infer<typeof checkReportSchema>;

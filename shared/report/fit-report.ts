@@ -11,7 +11,8 @@ export function writeReport(report: CheckReport): Uint8Array {
 
 /**
  * Makes a report fit into `maxReportBytes`: first fewer and fewer places, then no measures (from
- * about a thousand files on). The totals always stay, and `shortened` says what is missing.
+ * about a thousand files on), then no findings of single files, then not all files. Verdicts and
+ * totals always stay, and `shortened` says what is missing.
  */
 export function fitReport(report: CheckReport): CheckReport {
   if (fits(report)) return report;
@@ -20,7 +21,13 @@ export function fitReport(report: CheckReport): CheckReport {
     if (fits(shorter)) return shorter;
   }
   const bare = withoutMeasures(withFewerPlaces(report, 0));
-  return fits(bare) ? bare : withoutFileFindings(bare);
+  if (fits(bare)) return bare;
+  const lists = withoutFileFindings(bare);
+  // Every halving keeps the files that come first; nobody reads the list of so many.
+  for (let most = lists.files.length; ; most = Math.floor(most / 2)) {
+    const shorter = withFewerFiles(lists, most);
+    if (most === 0 || fits(shorter)) return shorter;
+  }
 }
 
 const fits = (report: CheckReport): boolean => writeReport(report).length <= maxReportBytes;
@@ -88,6 +95,7 @@ function withoutFileFindings(report: CheckReport): CheckReport {
   });
   return {
     ...report,
+    files: report.files.map((file) => ({ ...file, findings: [] })),
     session: {
       ...report.session,
       findings: report.session.findings.map(withoutDetails),
@@ -98,5 +106,18 @@ function withoutFileFindings(report: CheckReport): CheckReport {
       findings: report.package.findings.map(withoutDetails).slice(0, 500),
       comparison: { matches: [], sides: [] },
     },
+  };
+}
+
+function withFewerFiles(report: CheckReport, most: number): CheckReport {
+  return {
+    ...report,
+    files: report.files.slice(0, most),
+    package: {
+      ...report.package,
+      entries: report.package.entries.slice(0, most),
+      leftOut: report.package.leftOut.slice(0, most),
+    },
+    shortened: 'files',
   };
 }
