@@ -44,3 +44,21 @@ interface SubtleDigest {
 }
 
 declare const crypto: { readonly subtle: SubtleDigest };
+
+/** Both ends of a compression stream, as far as they are used. */
+declare class DecompressionStream {
+  constructor(format: 'deflate-raw');
+  readonly writable: {
+    getWriter(): {
+      write(bytes: Uint8Array): Promise<void>;
+      close(): Promise<void>;
+      abort(reason?: unknown): Promise<void>;
+    };
+  };
+  readonly readable: {
+    getReader(): {
+      read(): Promise<{ done: boolean; value?: Uint8Array }>;
+      cancel(reason?: unknown): Promise<void>;
+    };
+  };
+}

@@ -159,11 +159,9 @@ async function openEntry(
     record.localOffset + localBytes + view.getUint16(26, true) + view.getUint16(28, true);
   const { packedBytes, unpackedBytes } = record;
   if (offset + packedBytes > limit) throw refuse('overlapping-entries');
-  const entry =
-    record.method === deflated
-      ? inflateSource({ source, offset, packedBytes, unpackedBytes, refuse })
-      : partOf(source, offset, packedBytes);
-  return { ...entry, close: () => Promise.resolve() };
+  return record.method === deflated
+    ? inflateSource({ source, offset, packedBytes, unpackedBytes, refuse })
+    : { ...partOf(source, offset, packedBytes), close: () => Promise.resolve() };
 }
 
 /** Part of a source as a source of its own. */
