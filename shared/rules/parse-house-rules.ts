@@ -28,10 +28,12 @@ const kinds: Readonly<Record<string, string>> = {
 };
 
 function amount(issue: { origin: string }, limit: number | bigint, most: boolean): string {
-  const bound = most ? 'at most' : 'at least';
-  if (issue.origin === 'string') return `may have ${bound} ${limit} characters`;
-  if (issue.origin === 'array') return `may have ${bound} ${limit} entries`;
-  return `must be ${bound} ${limit}`;
+  const countable = { string: 'characters', array: 'entries' }[issue.origin];
+  if (countable === undefined) return `must be ${most ? 'at most' : 'at least'} ${limit}`;
+  if (!most && Number(limit) === 1) return 'must not be empty';
+  return most
+    ? `may have at most ${limit} ${countable}`
+    : `must have at least ${limit} ${countable}`;
 }
 
 function describe(issue: z.core.$ZodIssue): RulesIssue[] {
@@ -58,9 +60,9 @@ function describe(issue: z.core.$ZodIssue): RulesIssue[] {
         path: place([...issue.path, key]),
         message: 'is not part of house rules',
       }));
-    case 'invalid_format':
     case 'invalid_key':
       return [{ path, message: 'is not a key that is known here' }];
+    case 'invalid_format':
     case 'custom':
       return [{ path, message: issue.message }];
     case 'not_multiple_of':
