@@ -123,7 +123,7 @@ function addInstrument(root: TrieNode, entry: InstrumentEntry, instrument: Instr
       const meaning: Meaning = { kind: 'instrument', instrument, standing, adds };
       addForm(root, words, meaning);
       const last = words.at(-1) ?? '';
-      if (last.length >= 2 && /[a-rt-z]$/.test(last)) {
+      if (last.length >= 2 && /[a-rt-z0-9]$/.test(last)) {
         addForm(root, [...words.slice(0, -1), `${last}s`], meaning);
       }
     }

@@ -92,8 +92,10 @@ class NameReader {
       parsed.nature = group?.nature ?? instrument.nature;
       const sure = head?.sure === true && !this.guessed && this.strangers <= 1;
       parsed.confidence = sure ? 'certain' : 'guess';
-    } else if (role) {
-      parsed.confidence = role.sure ? 'certain' : 'guess';
+    } else {
+      // Which of several alike it is says nothing where nobody knows of what.
+      parsed.ordinal = null;
+      if (role) parsed.confidence = role.sure ? 'certain' : 'guess';
     }
   }
 

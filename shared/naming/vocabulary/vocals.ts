@@ -12,7 +12,7 @@ export const vocals: readonly InstrumentEntry[] = [
       lv, lvs, lead v, ldv, ldvx, haupt stimme, haupt gesang, lead gesang, lead singer,
       solo ${vocal}, voz cantante, prima voce, lead sung`,
     misspelt: `lead (vocla|voacl|vocl|vovals|vocasl), (laed|led|leed) ${vocal}`,
-    unsure: `lead, leads, main, ld, lead main, lead line`,
+    unsure: `lead, leads, main, ld, lead main, lead line, lvox, lvoc, lvocal`,
   },
   {
     written: 'Backing Vocal',
