@@ -8,6 +8,7 @@ import { ErrorPanel } from '../app/error-panel.tsx';
 import { Page } from '../app/shell.tsx';
 import { Button } from '../ui/button.tsx';
 import { PageHeader } from '../ui/page-header.tsx';
+import { BenchContext } from './bench-context.ts';
 import { Bench } from './bench.ts';
 import type { BenchState } from './bench-state.ts';
 import { Intake, Pickers, usePageDrop } from './intake.tsx';
@@ -119,12 +120,14 @@ function BusyBench({ bench, state, view, edition, projectId }: BusyBenchProps) {
         </div>
       )}
       <IntakeProblems problems={state.problems} />
-      <ReportView
-        view={view}
-        overviews={overviews}
-        chosen={state.chosen}
-        {...(checked && { onChoose: bench.choose, onUndo: bench.undo, onAnswer: bench.answer })}
-      />
+      <BenchContext value={bench}>
+        <ReportView
+          view={view}
+          overviews={overviews}
+          chosen={state.chosen}
+          {...(checked && { onChoose: bench.choose, onUndo: bench.undo, onAnswer: bench.answer })}
+        />
+      </BenchContext>
       <div className="flex flex-wrap items-center gap-x-6 gap-y-3 border-t border-line bg-sheet px-4 py-5 sm:px-7">
         <p className="text-small text-ink-2">
           Exported something again? Drop the folder or single files anywhere: only what changed is

@@ -3,7 +3,7 @@ import { emptyComparison, type Comparison } from '#shared/compare/comparison.ts'
 import { AppError } from '#shared/errors.ts';
 import type { Finding } from '#shared/findings/finding.ts';
 import { unaskedRepairs } from '#shared/repair/choose-repairs.ts';
-import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
+import type { ChosenRepair, RepairPlan } from '#shared/repair/repair-plan.ts';
 import { buildReport } from '#shared/report/build-report.ts';
 import type { HouseRules } from '#shared/rules/house-rules.ts';
 import { measureAll } from '#shared/session/measure-all.ts';
@@ -18,6 +18,7 @@ import { makeSampleFiles } from '../workers/sample-link.ts';
 import { openSessionWorker, type SessionWorker } from '../workers/session-link.ts';
 import { answered } from './answers.ts';
 import { judgedFindings, waitingBench, type BenchState } from './bench-state.ts';
+import type { ExcerptPlace } from './excerpts.ts';
 import { listIntake } from './intake-list.ts';
 import { recallSong, rememberSong } from './remembered-songs.ts';
 import { sampleSong } from './sample-session/sample-song.ts';
@@ -125,6 +126,23 @@ export class Bench {
   /** The dropped file behind a path, to look at or listen to a part of it. */
   fileAt(path: string): FileToRead | undefined {
     return this.files.find((file) => file.path === path);
+  }
+
+  /** Names the version of a file, so that what was read of it is read again when it changes. */
+  stampAt(path: string): string {
+    const file = this.fileAt(path);
+    return file ? stampOf(file) : path;
+  }
+
+  /** Frames of a file as they will be in the zip; null where it is not packed as a track. */
+  async repairedExcerpt(
+    place: ExcerptPlace,
+    plan: RepairPlan,
+    signal: AbortSignal,
+  ): Promise<Float32Array[] | null> {
+    const worker = await this.sessionWorker();
+    const input = { ...place, files: this.files, measured: this.measuredFiles(), plan };
+    return worker.call('repairedExcerpt', input, { signal });
   }
 
   /** Lays the zip out: its name and exact size, before a byte is made. */

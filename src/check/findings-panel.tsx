@@ -1,4 +1,4 @@
-import { useId, type ReactNode } from 'react';
+import { useId, useState, type ReactNode } from 'react';
 import { describeFinding, nextStep } from '#shared/findings/catalogue/describe-finding.ts';
 import { nextSteps, type NextStep } from '#shared/findings/catalogue/definition.ts';
 import { levels, type Finding, type Level, type RepairKind } from '#shared/findings/finding.ts';
@@ -10,6 +10,8 @@ import { LevelIcon, levelWords } from '../ui/level-mark.tsx';
 import { Menu, MenuItem } from '../ui/menu.tsx';
 import { TapeLabel } from '../ui/tape-label.tsx';
 import { answerWords } from './answers.ts';
+import { useBenchHere } from './bench-context.ts';
+import { CloseUp } from './close-up.tsx';
 import { fileName } from './file-name.ts';
 import { repairWords, takenWords } from './repair-words.ts';
 import { clockTime } from './time-axis.ts';
@@ -103,6 +105,7 @@ function FindingItem({
           <p className="mt-1">{why}</p>
           <p className="mt-1">{how}</p>
         </details>
+        <Listening finding={finding} view={view} />
         {finding.answer !== null && (
           <p className="mt-2 flex flex-wrap items-center gap-2 text-small">
             <span className="font-medium">
@@ -145,6 +148,41 @@ function FindingItem({
     </li>
   );
 }
+
+/** The close-up of a finding that has places, where the files are at hand. */
+function Listening({ finding, view }: { finding: Finding; view: ViewedSession }): ReactNode {
+  const bench = useBenchHere();
+  const [shown, setShown] = useState(false);
+  const [path] = finding.files;
+  const format = view.files.find((file) => file.path === path)?.format;
+  if (!bench || path === undefined || !format || finding.ranges.length === 0) return null;
+  if (!shown) {
+    return (
+      <Button size="small" kind="quiet" className="mt-1 -ms-3" onClick={() => setShown(true)}>
+        Look closer and listen
+      </Button>
+    );
+  }
+  return (
+    <>
+      <CloseUp bench={bench} finding={finding} path={path} sampleRateHz={format.sampleRateHz} />
+      {loudCodes.has(finding.code) && (
+        <p className="mt-1 text-micro text-ink-2">Turn the volume down before you listen.</p>
+      )}
+    </>
+  );
+}
+
+/** Findings whose sound can startle. */
+const loudCodes: ReadonlySet<Finding['code']> = new Set([
+  'clipped',
+  'flat-tops',
+  'over-full-scale',
+  'starts-on-sound',
+  'ends-on-sound',
+  'dropout',
+  'not-a-number',
+]);
 
 function AnswerMenu({ onAnswer }: { onAnswer: (answer: AnswerKind) => void }): ReactNode {
   return (

@@ -19,13 +19,16 @@ type ReportViewProps = {
 export function ReportView({ view, overviews, ...repairs }: ReportViewProps) {
   return (
     <div className="grid grow border-t border-line lg:grid-cols-[minmax(0,1fr)_26rem]">
-      <div className="bg-sheet px-4 py-6 sm:px-7">
-        <h2 className="sr-only">Side by side</h2>
-        <SideBySide
-          view={view}
-          overviews={overviews}
-          onFinding={(path, code) => showFinding(path, code)}
-        />
+      <div className="bg-sheet">
+        {/* The picture stays in view while the findings beside it are read. */}
+        <div className="px-4 py-6 sm:px-7 lg:sticky lg:top-0 lg:max-h-[calc(100dvh-4rem)] lg:overflow-y-auto">
+          <h2 className="sr-only">Side by side</h2>
+          <SideBySide
+            view={view}
+            overviews={overviews}
+            onFinding={(path, code) => showFinding(path, code)}
+          />
+        </div>
       </div>
       <aside aria-label="Findings" className="border-line bg-sheet max-lg:border-t lg:border-s">
         <FindingsPanel view={view} {...repairs} />

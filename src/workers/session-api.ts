@@ -1,7 +1,7 @@
 import type { RepairedSession, SessionCheck } from '#shared/check.ts';
 import type { FileToRead } from './file-to-read.ts';
 import type { Comparison } from '#shared/compare/comparison.ts';
-import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
+import type { ChosenRepair, RepairPlan } from '#shared/repair/repair-plan.ts';
 import type { CheckReport } from '#shared/report/check-report.ts';
 import type { HouseRules } from '#shared/rules/house-rules.ts';
 import type { MeasuredFile } from '#shared/session/measured-file.ts';
@@ -20,6 +20,9 @@ export type PackOutput = {
   verified: boolean | null;
 };
 
+/** Frames of a file, [startFrame, startFrame + frames). */
+export type Excerpt = { startFrame: number; frames: number };
+
 /** Where the saving is: writing, then (for a picked file) reading back. */
 export type PackProgress = { step: 'writing' | 'verifying'; bytes: number };
 
@@ -28,6 +31,19 @@ export type SessionApi = {
   load: { input: WebAssembly.Module; progress: never; output: null };
   /** What is in a dropped zip. Throws AppError `zip-refused`. */
   listZip: { input: File; progress: never; output: ListedZip };
+  /** Some frames of a dropped file, one array a channel, full scale = 1. */
+  excerpt: { input: Excerpt & { file: FileToRead }; progress: never; output: Float32Array[] };
+  /** The same frames as they will be in the zip; null where the file is not packed as a track. */
+  repairedExcerpt: {
+    input: Excerpt & {
+      path: string;
+      files: FileToRead[];
+      measured: MeasuredFile[];
+      plan: RepairPlan;
+    };
+    progress: never;
+    output: Float32Array[] | null;
+  };
   compare: {
     input: { files: FileToRead[]; measured: MeasuredFile[] };
     progress: never;

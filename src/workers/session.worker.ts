@@ -2,6 +2,8 @@ import { packSession, repairSession } from '#shared/check.ts';
 import { createMeters } from '#shared/measure/create-meters.ts';
 import { drawTrackSheet } from '#shared/pack/track-sheet/draw-track-sheet.ts';
 import type { Package } from '#shared/pack/pack-entries.ts';
+import { droppedTracks, renderPlanned } from '#shared/repair/measure-entries.ts';
+import { readExcerpt } from '#shared/session/read-excerpt.ts';
 import { compareFiles } from '#shared/session/compare-files.ts';
 import { measureHere, type MeasureFile } from '#shared/session/measure-file.ts';
 import { writeToPickedFile } from '../browser/write-picked-file.ts';
@@ -25,6 +27,14 @@ serveWorker<SessionApi>({
   async listZip(file) {
     const { files, problems } = await listZip(file);
     return { files: files.map(({ path, size }) => ({ path, size })), problems };
+  },
+  excerpt({ file, startFrame, frames }) {
+    return readExcerpt(droppedFile(file), startFrame, frames);
+  },
+  async repairedExcerpt({ path, files, measured, plan, startFrame, frames }) {
+    const entry = plan.entries.find(({ from }) => from.includes(path));
+    const rendered = entry && (await renderPlanned(entry, droppedTracks(dropped(files), measured)));
+    return rendered ? readExcerpt(rendered, startFrame, frames) : null;
   },
   compare({ files, measured }, { signal }) {
     return compareFiles(measured, dropped(files), signal);
