@@ -137,7 +137,7 @@ export function Form({
         <div className="flex flex-col items-start gap-3 sm:flex-row">
           <div className="w-full min-w-0 sm:grow">{children}</div>
           {/* Level with the control, whose label is one line above it. */}
-          <div className="sm:pt-7">{button}</div>
+          <div className="shrink-0 sm:pt-7">{button}</div>
         </div>
         {failure}
       </form>

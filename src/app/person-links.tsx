@@ -22,8 +22,7 @@ function Links() {
           className="inline-flex min-h-9 max-w-48 items-center rounded-full border border-edge bg-sheet px-4 text-[0.9375rem] hover:border-ink"
         >
           <span className="truncate">
-            <span className="sr-only">Account of </span>
-            {session.user.name}
+            <span className="sr-only">Account of</span> {session.user.name}
           </span>
         </NavLink>
       }
@@ -34,9 +33,14 @@ function Links() {
       <NavLink to="/projects" className={headerLinkClass}>
         Projects
       </NavLink>
-      <NavLink to={studioPath(session.studios.map(({ slug }) => slug))} className={headerLinkClass}>
-        Studio
-      </NavLink>
+      {session.studios.length > 0 && (
+        <NavLink
+          to={studioPath(session.studios.map(({ slug }) => slug))}
+          className={headerLinkClass}
+        >
+          Studio
+        </NavLink>
+      )}
     </HeaderLinks>
   );
 }

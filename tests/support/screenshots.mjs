@@ -103,7 +103,8 @@ for (const { theme, width, height } of looks) {
     await page.getByRole('heading', { level: 1 }).waitFor();
     await page.waitForLoadState('networkidle');
     await prepare?.(page);
-    await page.waitForLoadState('networkidle');
+    // Grey lines stand where something is still loading.
+    await page.locator('.animate-pulse').first().waitFor({ state: 'detached' });
     await page.evaluate('document.fonts.ready.then(() => null)');
     const file = path.join(to, `${name}-${theme}-${width}.png`);
     await page.screenshot({ path: file, fullPage: whole });
