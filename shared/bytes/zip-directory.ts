@@ -1,6 +1,7 @@
 import { AppError } from '../errors.ts';
 import { boundedReader, type BoundedReader } from './bounded-reader.ts';
 import type { ByteSource } from './byte-source.ts';
+import { readUint64 } from './read-uint64.ts';
 import { decodeZipName } from './zip-names.ts';
 
 /** Signatures and sizes of APPNOTE 6.3 (section 4.3), little-endian. */
@@ -130,7 +131,7 @@ async function readZip64End(reader: BoundedReader, endAt: number): Promise<Direc
   if (locatorAt < 0) return null;
   const locator = await reader.read(locatorAt, zip64LocatorBytes);
   if (viewOf(locator).getUint32(0, true) !== zip64LocatorSignature) return null;
-  const at = uint64(viewOf(locator), 8);
+  const at = readUint64(viewOf(locator), 8);
   const end = await reader.read(at, zip64EndBytes);
   if (end.length < zip64EndBytes || viewOf(end).getUint32(0, true) !== zip64EndSignature) {
     throw zipRefused('damaged-directory');
@@ -139,7 +140,12 @@ async function readZip64End(reader: BoundedReader, endAt: number): Promise<Direc
   if (view.getUint32(16, true) !== 0 || view.getUint32(20, true) !== 0) {
     throw zipRefused('several-parts');
   }
-  return { entries: uint64(view, 32), bytes: uint64(view, 40), offset: uint64(view, 48), at };
+  return {
+    entries: readUint64(view, 32),
+    bytes: readUint64(view, 40),
+    offset: readUint64(view, 48),
+    at,
+  };
 }
 
 /**
@@ -156,7 +162,7 @@ function withZip64(extra: Uint8Array, record: ZipRecord): ZipRecord {
       const widen = (value: number): number => {
         if (value !== 0xffffffff || field + 8 > end) return value;
         field += 8;
-        return uint64(view, field - 8);
+        return readUint64(view, field - 8);
       };
       const unpackedBytes = widen(record.unpackedBytes);
       const packedBytes = widen(record.packedBytes);
@@ -169,8 +175,4 @@ function withZip64(extra: Uint8Array, record: ZipRecord): ZipRecord {
 
 function viewOf(bytes: Uint8Array): DataView {
   return new DataView(bytes.buffer, bytes.byteOffset, bytes.length);
-}
-
-function uint64(view: DataView, at: number): number {
-  return view.getUint32(at, true) + view.getUint32(at + 4, true) * 2 ** 32;
 }

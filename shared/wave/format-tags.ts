@@ -4,15 +4,14 @@
  * memory of that header; the ones a reference program can write are checked in the tests.
  */
 export const otherFormatTags: Readonly<Record<number, { name: string; lossy: boolean }>> = {
-  0x0002: { name: 'Microsoft ADPCM', lossy: true },
+  0x0002: { name: 'ADPCM', lossy: true },
   0x0006: { name: 'A-law', lossy: true },
   0x0007: { name: 'µ-law', lossy: true },
   0x0008: { name: 'DTS', lossy: true },
   0x0011: { name: 'IMA ADPCM', lossy: true },
   0x0014: { name: 'G.723 ADPCM', lossy: true },
   0x0016: { name: 'G.723 ADPCM', lossy: true },
-  0x0020: { name: 'Yamaha ADPCM', lossy: true },
-  0x0022: { name: 'TrueSpeech', lossy: true },
+  0x0020: { name: 'ADPCM', lossy: true },
   0x0031: { name: 'GSM 6.10', lossy: true },
   0x0040: { name: 'G.721 ADPCM', lossy: true },
   0x0042: { name: 'G.723.1', lossy: true },

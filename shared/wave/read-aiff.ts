@@ -3,7 +3,7 @@ import { decodeChunkText } from './chunk-text.ts';
 import { maxChannels } from './format-limits.ts';
 import { readAiffMarkers } from './read-markers.ts';
 import type { TrackFormat, UnreadableReason, WaveReading } from './track-format.ts';
-import { chunkId, placeOf, walkChunks } from './walk-chunks.ts';
+import { chunkContents, chunkId, placeOf, walkChunks } from './walk-chunks.ts';
 
 const maxMarkBytes = 512 * 1024;
 
@@ -44,7 +44,7 @@ const lossyTypes: Record<string, string> = {
   MAC3: 'MACE 3:1',
   MAC6: 'MACE 6:1',
   'GSM ': 'GSM 6.10',
-  QDMC: 'QDesign',
+  QDMC: 'QDMC',
   G722: 'G.722',
   '.mp3': 'MP3',
 };
@@ -157,12 +157,8 @@ export async function readAiff(
   const frames = Math.floor(Math.min(available, promised ?? available) / bytesPerFrame);
   if (frames === 0) return unreadable('no-audio-in-data', Math.min(dataOffset, reader.size));
 
-  const contents = async (id: string, limit: number): Promise<Uint8Array | null> => {
-    const chunk = chunks.find((place) => place.id === id);
-    return chunk ? reader.readUpTo(chunk.contentOffset, chunk.contentBytes, limit) : null;
-  };
-  const mark = await contents('MARK', maxMarkBytes);
-  const name = await contents('NAME', 256);
+  const mark = await chunkContents(reader, chunks, 'MARK', maxMarkBytes);
+  const name = await chunkContents(reader, chunks, 'NAME', 256);
   return {
     kind: 'track',
     format: { container, ...comm.encoding, frames, timeReferenceFrames: null },

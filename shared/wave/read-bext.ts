@@ -1,3 +1,5 @@
+import { readUint64 } from '../bytes/read-uint64.ts';
+
 /**
  * The broadcast extension chunk of EBU Tech 3285 v2, section 2.3: fixed fields, then the coding
  * history. Offsets and lengths in bytes from the start of the chunk's contents.
@@ -26,6 +28,6 @@ export function readTimeReference(bext: Uint8Array): number | null {
   const { offset, bytes } = bextFields.timeReference;
   if (bext.length < offset + bytes) return null;
   const view = new DataView(bext.buffer, bext.byteOffset, bext.length);
-  const frames = view.getUint32(offset, true) + view.getUint32(offset + 4, true) * 2 ** 32;
+  const frames = readUint64(view, offset);
   return Number.isSafeInteger(frames) ? frames : null;
 }

@@ -3,6 +3,7 @@ import { readTimeReference } from './read-bext.ts';
 import { maxIxmlBytes, readIxml } from './read-ixml.ts';
 import { joinMarkers, maxMarkers, readCueLabels, readCuePoints } from './read-markers.ts';
 import type { ChunkPlace, Marker } from './track-format.ts';
+import { chunkContents } from './walk-chunks.ts';
 
 const maxListBytes = 512 * 1024;
 
@@ -21,10 +22,7 @@ export async function readRiffMetadata(
   chunks: readonly ChunkPlace[],
   audio: { sampleRateHz: number; frames: number },
 ): Promise<RiffMetadata> {
-  const contents = async (id: string, limit: number): Promise<Uint8Array | null> => {
-    const chunk = chunks.find((place) => place.id === id);
-    return chunk ? reader.readUpTo(chunk.contentOffset, chunk.contentBytes, limit) : null;
-  };
+  const contents = (id: string, limit: number) => chunkContents(reader, chunks, id, limit);
 
   const bext = await contents('bext', 602);
   const ixmlBytes = await contents('iXML', maxIxmlBytes);

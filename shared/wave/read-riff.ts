@@ -1,4 +1,5 @@
 import type { BoundedReader } from '../bytes/bounded-reader.ts';
+import { readUint64 } from '../bytes/read-uint64.ts';
 import { otherFormatTags } from './format-tags.ts';
 import { readFmt, type FmtReading } from './read-fmt.ts';
 import { readRiffMetadata } from './read-riff-metadata.ts';
@@ -11,10 +12,6 @@ const sizeElsewhere = 0xffffffff;
 /** The 64-bit sizes of an RF64 or BW64 file (EBU Tech 3306 section 3; ITU-R BS.2088). */
 type Ds64 = { dataBytes: number; table: Map<string, number> };
 
-function uint64(view: DataView, at: number): number {
-  return view.getUint32(at, true) + view.getUint32(at + 4, true) * 2 ** 32;
-}
-
 /** ds64: riffSize u64, dataSize u64, sampleCount u64, tableLength u32, then (id4, u64) entries. */
 function readDs64(bytes: Uint8Array): Ds64 | null {
   if (bytes.length < 24) return null;
@@ -22,9 +19,9 @@ function readDs64(bytes: Uint8Array): Ds64 | null {
   const table = new Map<string, number>();
   const entries = bytes.length >= 28 ? view.getUint32(24, true) : 0;
   for (let i = 0, at = 28; i < entries && at + 12 <= bytes.length; i += 1, at += 12) {
-    table.set(String.fromCharCode(...bytes.subarray(at, at + 4)), uint64(view, at + 4));
+    table.set(String.fromCharCode(...bytes.subarray(at, at + 4)), readUint64(view, at + 4));
   }
-  return { dataBytes: uint64(view, 8), table };
+  return { dataBytes: readUint64(view, 8), table };
 }
 
 /**

@@ -20,7 +20,7 @@ const signatures: readonly Signature[] = [
   { text: 'ID3', formatName: 'MP3', lossy: true, ask: true },
   { text: 'ftyp', at: 4, formatName: 'MP4 audio', lossy: true, ask: true },
   { text: '\x30\x26\xb2\x75\x8e\x66\xcf\x11', formatName: 'WMA', lossy: true, ask: true },
-  { text: 'MAC ', formatName: "Monkey's Audio", lossy: false, ask: true },
+  { text: 'MAC ', formatName: 'APE', lossy: false, ask: true },
   { text: 'wvpk', formatName: 'WavPack', lossy: false, ask: true },
   { text: 'MPCK', formatName: 'Musepack', lossy: true, ask: true },
   { text: 'MP+', formatName: 'Musepack', lossy: true, ask: true },
@@ -29,7 +29,7 @@ const signatures: readonly Signature[] = [
   { text: 'TTA1', formatName: 'TTA', lossy: false },
   { text: 'tBaK', formatName: 'TAK', lossy: false },
   { text: 'ajkg', formatName: 'Shorten', lossy: false },
-  { text: 'OFR ', formatName: 'OptimFROG', lossy: false },
+  { text: 'OFR ', formatName: 'OFR', lossy: false },
   { text: '#!AMR', formatName: 'AMR', lossy: true },
   { text: '\x0b\x77', formatName: 'AC-3', lossy: true },
   { text: '\x7f\xfe\x80\x01', formatName: 'DTS', lossy: true },
@@ -198,7 +198,7 @@ function nameFormat(format: LibraryFormat): RecognisedAudio | 'no-audio' | undef
     if (pattern.test(codec)) return { formatName, lossy: lossy ?? lossless !== true };
   }
   if (/wavpack/i.test(container)) return { formatName: 'WavPack', lossy: lossless === false };
-  if (/monkey/i.test(container)) return { formatName: "Monkey's Audio", lossy: false };
+  if (/monkey/i.test(container)) return { formatName: 'APE', lossy: false };
   if (/musepack/i.test(container)) return { formatName: 'Musepack', lossy: true };
   if (/asf/i.test(container)) return { formatName: 'WMA', lossy: lossless !== true };
   return undefined;

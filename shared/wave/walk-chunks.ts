@@ -40,6 +40,17 @@ export function placeOf({ id, contentOffset, contentBytes }: WalkedChunk): Chunk
   return { id, contentOffset, contentBytes };
 }
 
+/** Contents of the first chunk of that id, at most `limit` bytes; null where there is none. */
+export async function chunkContents(
+  reader: BoundedReader,
+  chunks: readonly ChunkPlace[],
+  id: string,
+  limit: number,
+): Promise<Uint8Array | null> {
+  const chunk = chunks.find((place) => place.id === id);
+  return chunk ? reader.readUpTo(chunk.contentOffset, chunk.contentBytes, limit) : null;
+}
+
 function isPrintable(id: string): boolean {
   return /^[\x20-\x7e]{4}$/.test(id);
 }
