@@ -1,15 +1,24 @@
 import { bytesSource } from '#shared/bytes/byte-source.ts';
+import { createMeters } from '#shared/measure/create-meters.ts';
 import type { Measures } from '#shared/measure/measures.ts';
 import { measureTrack } from '#shared/measure/measure-track.ts';
 import type { MeterEngine, MeterResult } from '#shared/measure/meter.ts';
-import { loadMeters } from '../../server/cli/load-meters.ts';
+import { loadMeterModule } from '../../server/cli/load-meters.ts';
 import { writeTestWave, type TestSamples } from './audio-writer.ts';
 import { readTrack, type TrackReading } from './reading.ts';
+
+let compiled: Promise<WebAssembly.Module> | undefined;
+
+/** WebAssembly meters of their own, so that files can be measured side by side. */
+export async function newMeters(): Promise<MeterEngine> {
+  compiled ??= loadMeterModule();
+  return createMeters(await compiled);
+}
 
 /** Measures the bytes of a whole file with the WebAssembly meters. */
 export async function measureBytes(bytes: Uint8Array): Promise<Measures> {
   const source = bytesSource(bytes);
-  const { measures } = await measureTrack(source, await readTrack(bytes), await loadMeters());
+  const { measures } = await measureTrack(source, await readTrack(bytes), await newMeters());
   return measures;
 }
 
