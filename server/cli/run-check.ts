@@ -1,5 +1,5 @@
-import { readFile, stat } from 'node:fs/promises';
-import { resolve } from 'node:path';
+import { access, constants, readFile, realpath, stat } from 'node:fs/promises';
+import { dirname, resolve } from 'node:path';
 import { checkSession, packSession, repairSession, type CheckInput } from '#shared/check.ts';
 import { AppError } from '#shared/errors.ts';
 import { allFindings } from '#shared/judge/all-findings.ts';
@@ -76,7 +76,7 @@ async function checkAndPack(
 ): Promise<{ report: CheckReport; problems: Intake['problems'] }> {
   const rules = await readRules(args.rules);
   const intake = await readIntake(args.target, args.roughMix, args.out, signal);
-  if (args.out !== null) await refuseToOverwrite(args.out, intake);
+  if (args.out !== null) await examineTarget(args.out, intake);
   const information = sayInformation(args, intake);
   const engine = await loadMeters();
   const input: CheckInput = {
@@ -150,13 +150,19 @@ async function readRules(path: string | null): Promise<HouseRules> {
   );
 }
 
-/** Writing the package must never destroy what is checked. */
-async function refuseToOverwrite(out: string, { files, root }: Intake): Promise<void> {
+/** Said before the check, not after it: where nothing can be written, or only over a checked file. */
+async function examineTarget(out: string, { files, root }: Intake): Promise<void> {
   const target = resolve(out);
+  const folder = dirname(target);
+  await access(folder, constants.W_OK).catch((error: unknown) => {
+    throw new AppError('no-access', { path: folder, reason: (error as { code?: string }).code });
+  });
   const info = await stat(target).catch(() => null);
   if (info?.isDirectory()) throw new AppError('no-access', { path: out, reason: 'EISDIR' });
-  const isSource = target === root || files.some(({ path }) => resolve(root, path) === target);
-  if (isSource) throw new AppError('already-taken', { field: 'out', path: out });
+  const place = info ? await realpath(target) : target;
+  if (place === root || files.some(({ path }) => resolve(root, path) === place)) {
+    throw new AppError('already-taken', { field: 'out', path: out });
+  }
 }
 
 function sayInformation(args: CheckArguments, { roughMix }: Intake): SessionInformation {

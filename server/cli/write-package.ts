@@ -1,7 +1,7 @@
 import { randomBytes } from 'node:crypto';
-import { open, rename, unlink } from 'node:fs/promises';
+import { open, realpath, rename, stat, unlink } from 'node:fs/promises';
 import { rmSync } from 'node:fs';
-import { basename, dirname, join } from 'node:path';
+import { dirname, join } from 'node:path';
 import { AppError } from '#shared/errors.ts';
 import type { Package } from '#shared/pack/pack-entries.ts';
 
@@ -16,7 +16,8 @@ export function removeHalfWritten(): void {
 
 /**
  * Writes the package beside its target under another name and renames it when it is complete and
- * on the disk, so that there is never half a zip under the name somebody asked for.
+ * on the disk, so that there is never half a zip under the name somebody asked for. A link is
+ * followed; what is no ordinary file (a device, a pipe) is written to directly.
  * Throws AppError `disk-full`, `no-access` and what the package's stream throws.
  */
 export async function writePackage(
@@ -25,36 +26,51 @@ export async function writePackage(
   onBytes: (bytes: number) => void,
   signal: AbortSignal,
 ): Promise<void> {
-  const partial = join(
-    dirname(target),
-    `.${basename(target)}.${randomBytes(4).toString('hex')}.part`,
-  );
-  const handle = await open(partial, 'wx').catch((error: unknown) => {
-    throw writeProblem(error, target);
-  });
+  const existing = await stat(target).catch(() => null);
+  if (existing && !existing.isFile()) {
+    await writeTo(target, 'w', target, pack, onBytes, signal);
+    return;
+  }
+  const place = existing ? await realpath(target) : target;
+  const partial = join(dirname(place), `.${randomBytes(6).toString('hex')}.part`);
   halfWritten.add(partial);
   try {
-    try {
-      let written = 0;
-      for await (const block of pack.stream(signal)) {
-        await writeAll(handle, block, target);
-        written += block.length;
-        onBytes(written);
-      }
-      await handle.sync().catch((error: unknown) => {
-        throw writeProblem(error, target);
-      });
-    } finally {
-      await handle.close();
-    }
-    await rename(partial, target).catch((error: unknown) => {
+    await writeTo(partial, 'wx', target, pack, onBytes, signal);
+    await rename(partial, place).catch((error: unknown) => {
       throw writeProblem(error, target);
     });
-    halfWritten.delete(partial);
   } catch (error) {
     await unlink(partial).catch(() => undefined);
-    halfWritten.delete(partial);
     throw error;
+  } finally {
+    halfWritten.delete(partial);
+  }
+}
+
+async function writeTo(
+  path: string,
+  flags: 'w' | 'wx',
+  target: string,
+  pack: Package,
+  onBytes: (bytes: number) => void,
+  signal: AbortSignal,
+): Promise<void> {
+  const handle = await open(path, flags).catch((error: unknown) => {
+    throw writeProblem(error, target);
+  });
+  try {
+    let written = 0;
+    for await (const block of pack.stream(signal)) {
+      await writeAll(handle, block, target);
+      written += block.length;
+      onBytes(written);
+    }
+    // Devices and pipes cannot be synchronised, and need not be.
+    await handle.sync().catch((error: unknown) => {
+      if ((error as { code?: unknown }).code !== 'EINVAL') throw writeProblem(error, target);
+    });
+  } finally {
+    await handle.close();
   }
 }
 
