@@ -3,8 +3,7 @@ import { useState } from 'react';
 import { call } from '../../app/api-client.ts';
 import { emailWords, givenPasswordWords } from '../../app/field-words.ts';
 import { Form, useBodyForm, wrongPassword } from '../../app/form.tsx';
-import { Field } from '../../ui/field.tsx';
-import { PasswordInput, TextInput } from '../../ui/text-input.tsx';
+import { CurrentPasswordField, EmailField } from './account-fields.tsx';
 import { MailSent } from './mail-sent.tsx';
 
 export function ChangeAddress() {
@@ -26,30 +25,17 @@ export function ChangeAddress() {
     );
   return (
     <Form form={form} submitWords="Send the link" busyWords="Sending…" submitKind="plain">
-      <Field label="New address" error={form.mistake('newEmail')}>
-        {(control) => (
-          <TextInput
-            {...control}
-            {...form.register('newEmail')}
-            type="email"
-            inputMode="email"
-            autoComplete="email"
-          />
-        )}
-      </Field>
-      <Field
-        label="Password"
+      <EmailField
+        label="New address"
+        autoComplete="email"
+        error={form.mistake('newEmail')}
+        registration={form.register('newEmail')}
+      />
+      <CurrentPasswordField
         hint="So that nobody else moves your account from an open browser."
         error={form.mistake('password')}
-      >
-        {(control) => (
-          <PasswordInput
-            {...control}
-            {...form.register('password')}
-            autoComplete="current-password"
-          />
-        )}
-      </Field>
+        registration={form.register('password')}
+      />
     </Form>
   );
 }

@@ -2,10 +2,8 @@ import { changePassword } from '#shared/api/accounts.ts';
 import { call } from '../../app/api-client.ts';
 import { givenPasswordWords, newPasswordWords } from '../../app/field-words.ts';
 import { Form, useBodyForm, wrongPassword } from '../../app/form.tsx';
-import { Field } from '../../ui/field.tsx';
-import { PasswordInput } from '../../ui/text-input.tsx';
 import { toastDone } from '../../ui/toast.tsx';
-import { NewPasswordField } from './new-password-field.tsx';
+import { CurrentPasswordField, NewPasswordField } from './account-fields.tsx';
 
 export function ChangePassword() {
   const form = useBodyForm({
@@ -21,15 +19,11 @@ export function ChangePassword() {
   });
   return (
     <Form form={form} submitWords="Change the password" busyWords="Changing it…" submitKind="plain">
-      <Field label="Password until now" error={form.mistake('currentPassword')}>
-        {(control) => (
-          <PasswordInput
-            {...control}
-            {...form.register('currentPassword')}
-            autoComplete="current-password"
-          />
-        )}
-      </Field>
+      <CurrentPasswordField
+        label="Password until now"
+        error={form.mistake('currentPassword')}
+        registration={form.register('currentPassword')}
+      />
       <NewPasswordField
         label="New password"
         error={form.mistake('newPassword')}

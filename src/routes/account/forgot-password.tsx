@@ -4,9 +4,8 @@ import { Link } from 'react-router-dom';
 import { call } from '../../app/api-client.ts';
 import { emailWords } from '../../app/field-words.ts';
 import { Form, useBodyForm } from '../../app/form.tsx';
-import { Field } from '../../ui/field.tsx';
-import { TextInput } from '../../ui/text-input.tsx';
 import { AccountCard } from './account-card.tsx';
+import { EmailField } from './account-fields.tsx';
 import { MailSent } from './mail-sent.tsx';
 
 /** `/forgot-password`: asks for the mail with the link to `/reset-password`. */
@@ -37,17 +36,11 @@ export function ForgotPasswordPage() {
     >
       {sentTo === undefined ? (
         <Form form={form} submitWords="Send me the link" busyWords="Sending…">
-          <Field label="E-mail address" error={form.mistake('email')}>
-            {(control) => (
-              <TextInput
-                {...control}
-                {...form.register('email')}
-                type="email"
-                inputMode="email"
-                autoComplete="username"
-              />
-            )}
-          </Field>
+          <EmailField
+            autoComplete="username"
+            error={form.mistake('email')}
+            registration={form.register('email')}
+          />
         </Form>
       ) : (
         <MailSent address={sentTo}>

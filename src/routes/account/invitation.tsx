@@ -14,8 +14,8 @@ import { Field } from '../../ui/field.tsx';
 import { LoadingState } from '../../ui/states.tsx';
 import { TextInput } from '../../ui/text-input.tsx';
 import { AccountCard } from './account-card.tsx';
+import { NewPasswordField } from './account-fields.tsx';
 import { LostLink } from './lost-link.tsx';
-import { NewPasswordField } from './new-password-field.tsx';
 
 type Invitation = EndpointResponse<typeof readInvitation>;
 type Accepted = EndpointResponse<typeof acceptInvitation>;

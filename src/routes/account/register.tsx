@@ -8,6 +8,7 @@ import { Button } from '../../ui/button.tsx';
 import { Field } from '../../ui/field.tsx';
 import { TextInput } from '../../ui/text-input.tsx';
 import { AccountCard } from './account-card.tsx';
+import { EmailField } from './account-fields.tsx';
 import { MailSent } from './mail-sent.tsx';
 
 /** `/register`: asks for the mail that proves the address; the password comes behind its link. */
@@ -62,21 +63,12 @@ export function RegisterPage() {
         >
           {(control) => <TextInput {...control} {...form.register('name')} autoComplete="name" />}
         </Field>
-        <Field
-          label="E-mail address"
+        <EmailField
           hint="We send one mail there, to see that it is yours."
+          autoComplete="email"
           error={form.mistake('email')}
-        >
-          {(control) => (
-            <TextInput
-              {...control}
-              {...form.register('email')}
-              type="email"
-              inputMode="email"
-              autoComplete="email"
-            />
-          )}
-        </Field>
+          registration={form.register('email')}
+        />
       </Form>
     </AccountCard>
   );

@@ -7,9 +7,8 @@ import { Form, useBodyForm } from '../../app/form.tsx';
 import { homePath } from '../../app/home-path.ts';
 import { safeNextPath } from '../../app/next-path.ts';
 import { replaceSession, useSession } from '../../app/session-query.ts';
-import { Field } from '../../ui/field.tsx';
-import { PasswordInput, TextInput } from '../../ui/text-input.tsx';
 import { AccountCard } from './account-card.tsx';
+import { CurrentPasswordField, EmailField } from './account-fields.tsx';
 
 /** `/sign-in`, with `?next=` where the person was on their way somewhere. */
 export function SignInPage() {
@@ -62,26 +61,15 @@ export function SignInPage() {
           </Link>
         }
       >
-        <Field label="E-mail address" error={form.mistake('email')}>
-          {(control) => (
-            <TextInput
-              {...control}
-              {...form.register('email')}
-              type="email"
-              autoComplete="username"
-              inputMode="email"
-            />
-          )}
-        </Field>
-        <Field label="Password" error={form.mistake('password')}>
-          {(control) => (
-            <PasswordInput
-              {...control}
-              {...form.register('password')}
-              autoComplete="current-password"
-            />
-          )}
-        </Field>
+        <EmailField
+          autoComplete="username"
+          error={form.mistake('email')}
+          registration={form.register('email')}
+        />
+        <CurrentPasswordField
+          error={form.mistake('password')}
+          registration={form.register('password')}
+        />
       </Form>
     </AccountCard>
   );
