@@ -30,9 +30,10 @@ function readDs64(bytes: Uint8Array): Ds64 | null {
  * then: the audio runs to the end of the file.
  */
 function isStreamedSize(declaredBytes: number, available: number): boolean {
+  if (declaredBytes === sizeElsewhere || !Number.isSafeInteger(declaredBytes)) return true;
   if (declaredBytes <= available) return false;
   const nearHalf = declaredBytes >= 0x7fffe000 && declaredBytes <= 0x80000000;
-  const nearFull = declaredBytes >= 0xffffe000 && declaredBytes <= sizeElsewhere;
+  const nearFull = declaredBytes >= 0xffffe000 && declaredBytes < sizeElsewhere;
   return nearHalf || nearFull;
 }
 

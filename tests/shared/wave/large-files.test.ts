@@ -69,6 +69,20 @@ describe('files beyond 4 GiB', () => {
     });
   });
 
+  it('a streamed header promises nothing beyond 4 GiB either, with and without RF64', async () => {
+    const dataBytes = 5 * gib - ((5 * gib) % 6);
+    for (const form of ['RIFF', 'RF64'] as const) {
+      const whole = writeTestWave({ ...wave, form, lies: { dataBytes: 0xffffffff } });
+      const header = Buffer.from(whole.subarray(0, whole.length - 6));
+      if (form === 'RF64') header.fill(0xff, 20, 44);
+      const source = sparseSource(header.length + dataBytes, [{ offset: 0, bytes: header }]);
+      expect(await readWave(source, 'long.wav')).toMatchObject({
+        format: { frames: dataBytes / 3 },
+        layout: { promisedDataBytes: null },
+      });
+    }
+  });
+
   it('a file made of nothing but empty chunks is given up', async () => {
     const chunks = Buffer.from('JUNK\0\0\0\0'.repeat(200_000), 'latin1');
     const bytes = Buffer.concat([Buffer.from('RIFF\xff\xff\xff\0WAVE', 'latin1'), chunks]);
