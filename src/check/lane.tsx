@@ -1,28 +1,38 @@
-import { useEffect, useRef } from 'react';
+import { useQuery } from '@tanstack/react-query';
+import { useEffect, useMemo, useRef } from 'react';
 import type { Overview } from '#shared/measure/overview.ts';
+import { useBenchHere } from './bench-context.ts';
+import { drawLane, overviewPeaks, type Peaks } from './draw-lane.ts';
+import { laneDetailQuery } from './lane-detail.ts';
+import type { TimeView } from './time-view.ts';
+import type { ViewedFile } from './viewed-session.ts';
 
-/** The stretch of the common time axis that is on screen, in seconds from the start line. */
-export type TimeView = { startSeconds: number; endSeconds: number };
+type LaneProps = { file: ViewedFile; overview: Overview; view: TimeView };
 
-type LaneProps = {
-  overview: Overview;
-  frames: number;
-  sampleRateHz: number;
-  view: TimeView;
-};
-
-/** The waveform of one file, drawn from its overview: lowest and highest sample a pixel column. */
-export function Lane({ overview, frames, sampleRateHz, view }: LaneProps) {
+/**
+ * The waveform of one file, lowest and highest sample a pixel column: from its overview, and when
+ * that becomes too coarse from the file itself, of which then only this stretch is read again.
+ */
+export function Lane({ file, overview, view }: LaneProps) {
   const canvas = useRef<HTMLCanvasElement>(null);
+  const bench = useBenchHere();
+  const { frames, sampleRateHz } = file.format!;
+  const { data: detail } = useQuery(laneDetailQuery(bench, file, overview, view));
+  const coarse = useMemo(() => overviewPeaks(overview, sampleRateHz), [overview, sampleRateHz]);
+  const peaks: Peaks = detail ?? coarse;
 
   useEffect(() => {
     const element = canvas.current;
     if (!element) return;
-    const draw = (): void => drawLane(element, { overview, frames, sampleRateHz, view });
+    const places = file.findings.flatMap(({ level, ranges }) =>
+      ranges.map(({ startFrame }) => ({ level, seconds: startFrame / sampleRateHz })),
+    );
+    const draw = (): void =>
+      drawLane(element, { peaks, coarse, endSeconds: frames / sampleRateHz, view, places });
     draw();
     const sizes = new ResizeObserver(draw);
     sizes.observe(element);
-    // The wave's colour is a token, so it is drawn again when the theme changes.
+    // Colours are tokens, so the lane is drawn again when the theme changes.
     const themes = new MutationObserver(draw);
     themes.observe(document.documentElement, { attributeFilter: ['data-theme'] });
     const system = matchMedia('(prefers-color-scheme: dark)');
@@ -32,53 +42,18 @@ export function Lane({ overview, frames, sampleRateHz, view }: LaneProps) {
       themes.disconnect();
       system.removeEventListener('change', draw);
     };
-  }, [overview, frames, sampleRateHz, view]);
+  }, [
+    peaks,
+    coarse,
+    frames,
+    sampleRateHz,
+    view.startSeconds,
+    view.endSeconds,
+    file.findings,
+    view,
+  ]);
 
   return (
     <canvas ref={canvas} aria-hidden="true" className="absolute inset-0 size-full text-wave" />
   );
-}
-
-function drawLane(
-  canvas: HTMLCanvasElement,
-  { overview, frames, sampleRateHz, view }: LaneProps,
-): void {
-  const ratio = devicePixelRatio;
-  const width = Math.round(canvas.clientWidth * ratio);
-  const height = Math.round(canvas.clientHeight * ratio);
-  if (width === 0 || height === 0) return;
-  canvas.width = width;
-  canvas.height = height;
-  const context = canvas.getContext('2d');
-  if (!context) return;
-  context.fillStyle = getComputedStyle(canvas).color;
-
-  const columns = overview.channels[0] ? overview.channels[0].length / 2 : 0;
-  const secondsPerColumn = overview.framesPerColumn / sampleRateHz;
-  const secondsPerPixel = (view.endSeconds - view.startSeconds) / width;
-  const middle = height / 2;
-  const reach = (height / 2) * 0.86;
-  const end = frames / sampleRateHz;
-
-  for (let x = 0; x < width; x++) {
-    const from = view.startSeconds + x * secondsPerPixel;
-    if (from >= end) break;
-    const first = Math.max(0, Math.floor(from / secondsPerColumn));
-    const last = Math.min(
-      columns - 1,
-      Math.max(first, Math.ceil((from + secondsPerPixel) / secondsPerColumn) - 1),
-    );
-    let low = 0;
-    let high = 0;
-    for (const channel of overview.channels) {
-      for (let column = first; column <= last; column++) {
-        low = Math.min(low, channel[2 * column]!);
-        high = Math.max(high, channel[2 * column + 1]!);
-      }
-    }
-    // Silence still shows as a hairline: the file is there, only nothing sounds.
-    const top = middle - (high / 127) * reach;
-    const bottom = middle - (low / 127) * reach;
-    context.fillRect(x, top, 1, Math.max(bottom - top, ratio * 0.75));
-  }
 }

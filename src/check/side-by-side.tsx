@@ -1,103 +1,118 @@
-import type { ReactNode } from 'react';
+import { useRef, type ReactNode } from 'react';
 import type { Overview } from '#shared/measure/overview.ts';
-import { LevelIcon } from '../ui/level-mark.tsx';
+import { Button } from '../ui/button.tsx';
 import { Strip, StripRuler, StripSheet } from '../ui/strip.tsx';
 import { fileName } from './file-name.ts';
-import { Lane, type TimeView } from './lane.tsx';
-import { clockTime, rulerMarks, type BarGrid } from './time-axis.ts';
+import { Lane } from './lane.tsx';
+import { LaneMarks } from './lane-marks.tsx';
+import { rulerMarks, type BarGrid } from './time-axis.ts';
+import type { TimeView } from './time-view.ts';
+import { useTimeView } from './use-time-view.ts';
 import type { ViewedFile, ViewedSession } from './viewed-session.ts';
 
 type SideBySideProps = {
   view: ViewedSession;
   overviews: ReadonlyMap<string, Overview>;
   /** A mark was pressed: show that finding. */
-  onFinding?: (path: string, code: string) => void;
+  onFinding: (path: string, code: string) => void;
 };
 
 /** The picture: every track from one start line on one time axis, findings at their place. */
 export function SideBySide({ view: session, overviews, onFinding }: SideBySideProps) {
+  const sheet = useRef<HTMLDivElement>(null);
   const tracks = session.files.filter((file) => file.format !== null);
-  const longestSeconds = Math.max(
+  const songSeconds = Math.max(
+    0.001,
     ...tracks.map(({ format }) => format!.frames / format!.sampleRateHz),
-    0,
   );
-  const view: TimeView = { startSeconds: 0, endSeconds: longestSeconds || 1 };
+  const { view, isWhole, actions, onKeyDown } = useTimeView(songSeconds, sheet);
   return (
-    <StripSheet endLine>
-      <StripRuler marks={rulerMarks(view, barGrid(session))} />
-      {tracks.map((file) => (
-        <Strip
-          key={file.path}
-          name={file.proposedName ?? fileName(file.path)}
-          detail={file.proposedName === null ? undefined : fileName(file.path)}
+    <div
+      ref={sheet}
+      role="group"
+      aria-label="All files side by side. Plus and minus zoom, arrows move, 0 shows the whole song."
+      tabIndex={0}
+      onKeyDown={onKeyDown}
+      className="rounded focus-visible:outline-offset-8"
+    >
+      <div className="mb-2 flex flex-wrap justify-end gap-1">
+        <Button size="small" kind="quiet" onClick={actions.closer}>
+          Closer
+        </Button>
+        <Button size="small" kind="quiet" disabled={isWhole} onClick={actions.wider}>
+          Wider
+        </Button>
+        <Button
+          size="small"
+          kind="quiet"
+          disabled={isWhole}
+          aria-label="Earlier"
+          onClick={actions.earlier}
         >
-          <TrackLane
+          ‹
+        </Button>
+        <Button
+          size="small"
+          kind="quiet"
+          disabled={isWhole}
+          aria-label="Later"
+          onClick={actions.later}
+        >
+          ›
+        </Button>
+        <Button size="small" kind="quiet" disabled={isWhole} onClick={actions.whole}>
+          Whole song
+        </Button>
+      </div>
+      <StripSheet endLine={isWhole}>
+        <StripRuler marks={rulerMarks(view, barGrid(session))} />
+        {tracks.map((file) => (
+          <TrackStrip
+            key={file.path}
             file={file}
             overview={overviews.get(file.path)}
             view={view}
-            longestSeconds={longestSeconds}
+            songSeconds={songSeconds}
+            onFinding={onFinding}
           />
-          <Marks file={file} view={view} onFinding={onFinding} />
-        </Strip>
-      ))}
-    </StripSheet>
+        ))}
+      </StripSheet>
+    </div>
   );
 }
 
-type TrackLaneProps = {
+type TrackStripProps = {
   file: ViewedFile;
   overview: Overview | undefined;
   view: TimeView;
-  longestSeconds: number;
+  songSeconds: number;
+  onFinding: SideBySideProps['onFinding'];
 };
 
-function TrackLane({ file, overview, view, longestSeconds }: TrackLaneProps): ReactNode {
-  const { frames, sampleRateHz } = file.format!;
+function TrackStrip({ file, overview, view, songSeconds, onFinding }: TrackStripProps): ReactNode {
+  const { path, proposedName, format } = file;
+  const { frames, sampleRateHz } = format!;
+  const ownName = fileName(path);
   const endsAt =
     (frames / sampleRateHz - view.startSeconds) / (view.endSeconds - view.startSeconds);
+  const endsEarly = frames / sampleRateHz < songSeconds - 0.0005 && endsAt < 1;
   return (
-    <>
-      {overview && (
-        <Lane overview={overview} frames={frames} sampleRateHz={sampleRateHz} view={view} />
-      )}
-      {frames / sampleRateHz < longestSeconds && (
-        <div
-          className="strip-missing absolute inset-y-2 end-0"
-          style={{ insetInlineStart: `${String(endsAt * 100)}%` }}
-        />
-      )}
-    </>
+    <Strip
+      name={proposedName ?? ownName}
+      detail={proposedName === null || proposedName === ownName ? undefined : ownName}
+    >
+      <div className="absolute inset-0 overflow-hidden">
+        {overview && <Lane file={file} overview={overview} view={view} />}
+        {endsEarly && (
+          <div
+            className="strip-missing absolute inset-y-2 end-0"
+            style={{ insetInlineStart: `${String(Math.max(0, endsAt) * 100)}%` }}
+          />
+        )}
+      </div>
+      <LaneMarks file={file} view={view} onFinding={onFinding} />
+    </Strip>
   );
-}
-
-/** One mark a finding, where its first place is; findings about the whole file at the start. */
-function Marks({
-  file,
-  view,
-  onFinding,
-}: {
-  file: ViewedFile;
-  view: TimeView;
-  onFinding: SideBySideProps['onFinding'];
-}): ReactNode {
-  const span = view.endSeconds - view.startSeconds;
-  return file.findings.map((finding) => {
-    const seconds = (finding.ranges[0]?.startFrame ?? 0) / file.format!.sampleRateHz;
-    const at = (seconds - view.startSeconds) / span;
-    if (at < 0 || at > 1) return null;
-    return (
-      <button
-        key={`${finding.code}-${String(finding.channel)}`}
-        type="button"
-        className="absolute top-0 flex size-6 -translate-x-1/2 items-center justify-center rounded-slight hover:bg-wash"
-        style={{ insetInlineStart: `clamp(0.75rem, ${String(at * 100)}%, calc(100% - 0.75rem))` }}
-        aria-label={`${finding.level === 'must-fix' ? 'Must fix' : finding.level}: ${finding.code.replaceAll('-', ' ')}, ${clockTime(seconds)}`}
-        onClick={() => onFinding?.(file.path, finding.code)}
-      >
-        <LevelIcon level={finding.level} />
-      </button>
-    );
-  });
 }
 
 function barGrid({ information }: ViewedSession): BarGrid | null {

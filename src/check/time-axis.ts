@@ -1,5 +1,5 @@
 import type { RulerMark } from '../ui/strip.tsx';
-import type { TimeView } from './lane.tsx';
+import type { TimeView } from './time-view.ts';
 
 /** Seconds as m:ss, with milliseconds where asked. */
 export function clockTime(seconds: number, withMilliseconds = false): string {
@@ -25,28 +25,28 @@ export function secondsPerBar({ bpm, beatsPerBar, beatUnit }: BarGrid): number {
 }
 
 /**
- * About eight marks over the visible stretch, at whole bars where there is a tempo, otherwise at
- * whole seconds. Steps double (bars) or take clock-like sizes (seconds) as the view grows.
+ * About eight marks over the visible stretch, at whole bars where there is a tempo, otherwise (or
+ * when less than two bars are in view) at round times. Steps of bars double.
  */
 export function rulerMarks(view: TimeView, grid: BarGrid | null): RulerMark[] {
   const span = view.endSeconds - view.startSeconds;
   if (!(span > 0)) return [];
-  const unit = grid ? secondsPerBar(grid) : 1;
-  const steps = grid
+  const bars = grid && span >= 2 * secondsPerBar(grid) ? grid : null;
+  const unit = bars ? secondsPerBar(bars) : 1;
+  const steps = bars
     ? Array.from({ length: 16 }, (_, power) => 2 ** power)
-    : [1, 2, 5, 10, 15, 30, 60, 120, 300, 600, 1800, 3600];
+    : [0.01, 0.02, 0.05, 0.1, 0.2, 0.5, 1, 2, 5, 10, 15, 30, 60, 120, 300, 600, 1800, 3600];
   const step = steps.find((candidate) => span / (candidate * unit) <= 9) ?? steps.at(-1)!;
   const marks: RulerMark[] = [];
-  const first = Math.ceil(view.startSeconds / (step * unit) - 1e-9);
+  const first = Math.ceil((view.startSeconds / (step * unit)) * (1 - 1e-12) - 1e-9);
   for (let index = first; ; index++) {
     const seconds = index * step * unit;
-    if (seconds > view.endSeconds + 1e-9) return marks;
     const at = (seconds - view.startSeconds) / span;
-    const time = clockTime(seconds);
-    // A label that would run over the right edge is left out; the end line says where it is.
+    // A label that would run over the right edge is left out.
     if (at > 0.94) return marks;
+    const time = clockTime(seconds, step * unit < 1);
     marks.push(
-      grid ? { at, label: String(grid.startBar + index * step), time } : { at, label: time },
+      bars ? { at, label: String(bars.startBar + index * step), time } : { at, label: time },
     );
   }
 }
