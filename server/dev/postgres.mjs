@@ -206,6 +206,8 @@ async function launch(programs, home, port, durable) {
         stdio: ['ignore', log, log],
         // Fast shutdown: connections are ended, the data is left in order.
         stopSignal: 'SIGINT',
+        // Immediate shutdown: the next start repairs what was at work.
+        killSignal: 'SIGQUIT',
       },
     );
     closeSync(log);

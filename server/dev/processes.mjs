@@ -14,6 +14,7 @@ import { clearInterval, clearTimeout, setInterval, setTimeout } from 'node:timer
  * @property {import('node:child_process').ChildProcess} child
  * @property {Promise<string>} ended how it ended, in words; never rejects
  * @property {(graceSeconds?: number) => Promise<void>} stop asks it to end, then makes it
+ * @property {() => void} kill ends it and its own children at once
  */
 
 /** Programs of this process that have not ended, oldest first. @type {Set<RunningProgram>} */
@@ -87,10 +88,12 @@ export async function runProgram(command, { owner, cwd, env, shown, outlivesPare
  * @param {NodeJS.ProcessEnv} [options.env]
  * @param {import('node:child_process').StdioOptions} [options.stdio]
  * @param {'SIGTERM' | 'SIGINT'} [options.stopSignal]
+ * @param {'SIGKILL' | 'SIGQUIT'} [options.killSignal] what ends it when there is no time
  * @returns {RunningProgram}
  */
 export function startProgram(name, command, options = {}) {
-  const { owner, cwd, env, stdio = 'ignore', stopSignal = 'SIGTERM' } = options;
+  const { owner, cwd, env, stdio = 'ignore' } = options;
+  const { stopSignal = 'SIGTERM', killSignal = 'SIGKILL' } = options;
   const deathSignal = stopSignal === 'SIGINT' ? 'INT' : 'TERM';
   const [file = '', ...args] = dyingWithParent(command, { owner, deathSignal });
   const child = spawn(file, args, {
@@ -110,9 +113,14 @@ export function startProgram(name, command, options = {}) {
     ended,
     async stop(graceSeconds = 15) {
       child.kill(stopSignal);
-      const force = setTimeout(() => child.kill('SIGKILL'), graceSeconds * 1000);
+      const force = setTimeout(() => this.kill(), graceSeconds * 1000);
       await ended;
       clearTimeout(force);
+    },
+    kill() {
+      if (child.pid === undefined || child.exitCode !== null || child.signalCode !== null) return;
+      // It leads a process group, in which the programs it started are too.
+      process.kill(-child.pid, killSignal);
     },
   };
   runningPrograms.add(program);
@@ -127,7 +135,7 @@ export async function stopAllPrograms() {
 
 /** Ends every program started here at once, for the second Ctrl-C. */
 export function killAllPrograms() {
-  for (const program of runningPrograms) program.child.kill('SIGKILL');
+  for (const program of runningPrograms) program.kill();
 }
 
 /**

@@ -183,13 +183,18 @@ async function end(reason, exitCode) {
   process.exit(exitCode);
 }
 
+/** @type {number | undefined} */
+let firstSignalAt;
+
 for (const signal of /** @type {const} */ (['SIGINT', 'SIGTERM', 'SIGHUP'])) {
   process.on(signal, () => {
-    if (ending) {
+    firstSignalAt ??= performance.now();
+    void end('Stopping.', ready ? 0 : 130);
+    // A Ctrl-C comes twice at once, from the terminal and from npm: only a later one is impatience.
+    if (performance.now() - firstSignalAt > 1000) {
       killAllPrograms();
       process.exit(130);
     }
-    void end('Stopping.', ready ? 0 : 130);
   });
 }
 whenNpmDies(() => void end('npm is gone; stopping.', 1));

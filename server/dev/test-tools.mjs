@@ -32,7 +32,6 @@ export const testTools = [
   command('zip'),
   command('python3'),
   command('pdftotext', 'poppler-utils'),
-  command('pdftotext', 'poppler-utils'),
   {
     name: 'recordings',
     package: 'sonic-pi-samples',

@@ -36,13 +36,16 @@ test('a program ends when the process that started it is killed', async () => {
   expect(await untilGone(pid)).toBe(true);
 });
 
-test('a program that ignores the request to end is made to', async () => {
-  const program = startProgram('stubborn', ['sh', '-c', 'trap "" TERM; echo up; sleep 60'], {
+test('a program that ignores the request to end is made to, with what it started', async () => {
+  const stubborn = 'trap "" TERM; sleep 60 & echo $!; wait; sleep 60';
+  const program = startProgram('stubborn', ['sh', '-c', stubborn], {
     stdio: ['ignore', 'pipe', 'ignore'],
   });
-  if (program.child.stdout) await once(program.child.stdout, 'data');
+  if (!program.child.stdout) throw new Error('no output');
+  const [said] = (await once(program.child.stdout, 'data')) as [Buffer];
   await program.stop(0.2);
   expect(await program.ended).toBe('SIGKILL');
+  expect(await untilGone(Number(String(said)))).toBe(true);
 });
 
 test('a missing program is told apart from one that fails', async () => {
