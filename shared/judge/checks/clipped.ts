@@ -50,8 +50,12 @@ export function isClipped(
   return hasFlatRuns(channel, rules) && !isFlatByDesign(channel, track, rules);
 }
 
-/** So many flat tops a second are no overload but a sound, of parts that are distorted at times. */
+/**
+ * So many flat tops a second, in so large a share of the cycles, are no overload but a sound, of
+ * parts that are distorted at times.
+ */
 const denseRunsPerSecond = 50;
+const denseFlatShare = 0.3;
 
 /**
  * Nearly every cycle ends flat; or, where distortion is often wanted and nothing hits full scale,
@@ -66,6 +70,7 @@ function isFlatByDesign(
   const seconds = measures.frames / format.sampleRateHz;
   return (
     clippingClass(name) === 'often-wanted' &&
+    clipping.flatCycleShare >= denseFlatShare &&
     clipping.fullScaleRuns === 0 &&
     clippedRuns >= denseRunsPerSecond * seconds
   );

@@ -1,11 +1,15 @@
 import { found, type TrackCheck } from '../check.ts';
 
+/** A sound whose last millisecond is this far under the limit has died away or was faded out. */
+const diedAwayDb = 15;
+
 /** The file ends while something still rings well above its own floor. */
 export const tailCut: TrackCheck = ({ measures }, { rules, cutFromLongerRecording }) => {
   const { tailDbfs, tailAboveFloorDb } = rules.signal;
   const ringing = measures.channels.filter(
-    ({ tailPeakDbfs, floorDbfs }) =>
+    ({ tailPeakDbfs, floorDbfs, endEdge }) =>
       tailPeakDbfs !== null &&
+      (endEdge.peakDbfs ?? -Infinity) > tailDbfs - diedAwayDb &&
       tailPeakDbfs > tailDbfs &&
       tailPeakDbfs > (floorDbfs ?? -Infinity) + tailAboveFloorDb,
   );

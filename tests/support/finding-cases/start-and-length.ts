@@ -35,13 +35,13 @@ export const startAndLengthCases = {
         measuredFile({
           path,
           format: { frames: shorter },
-          channel: { tailPeakDbfs: -59.9, floorDbfs: -60 },
+          channel: { tailPeakDbfs: -59.9, floorDbfs: -60, endEdge: { peakDbfs: -60, ramps: true } },
         }),
         // A time stamp that puts it 20 s into the session: its start was cut.
         measuredFile({
           path: 'Violin.wav',
           format: { frames: shorter, timeReferenceFrames: 960_000 },
-          channel: { tailPeakDbfs: -59.9, floorDbfs: -60 },
+          channel: { tailPeakDbfs: -59.9, floorDbfs: -60, endEdge: { peakDbfs: -60, ramps: true } },
         }),
         measuredFile({ path: 'Cello.wav', format: { frames: 8_640_001 } }),
       ],
@@ -176,7 +176,16 @@ export const startAndLengthCases = {
   },
   'tail-cut': {
     defect: {
-      add: [measuredFile({ path, channel: { tailPeakDbfs: -59.9, floorDbfs: -72 } })],
+      add: [
+        measuredFile({
+          path,
+          channel: {
+            tailPeakDbfs: -59.9,
+            floorDbfs: -72,
+            endEdge: { peakDbfs: -74.9, ramps: true },
+          },
+        }),
+      ],
     },
     found: [
       {
@@ -190,8 +199,19 @@ export const startAndLengthCases = {
     ],
     clean: {
       add: [
-        measuredFile({ path, channel: { tailPeakDbfs: -60, floorDbfs: -90 } }),
-        measuredFile({ path: 'Violin.wav', channel: { tailPeakDbfs: -40, floorDbfs: -52 } }),
+        measuredFile({
+          path,
+          channel: { tailPeakDbfs: -60, floorDbfs: -90, endEdge: { peakDbfs: -60, ramps: true } },
+        }),
+        measuredFile({
+          path: 'Violin.wav',
+          channel: { tailPeakDbfs: -40, floorDbfs: -52, endEdge: { peakDbfs: -60, ramps: true } },
+        }),
+        // A drum that has died away by its last millisecond.
+        measuredFile({
+          path: 'Snare.wav',
+          channel: { tailPeakDbfs: -40, floorDbfs: -90, endEdge: { peakDbfs: -75, ramps: true } },
+        }),
       ],
     },
   },

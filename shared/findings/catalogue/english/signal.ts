@@ -19,7 +19,7 @@ export const signalWords: Pick<LanguageWords, keyof typeof signal> = {
   'flat-tops': {
     words: ({ flatCyclePercent, ceilingDbfs }, format) => ({
       title: 'Flat by design',
-      what: `Nearly every wave (${format.percent(flatCyclePercent)}) is cut flat, at ${format.dbfs(ceilingDbfs)}. That is what fuzz, square waves and clipping on purpose look like.`,
+      what: `Of its waves, ${format.percent(flatCyclePercent)} are cut flat, at ${format.dbfs(ceilingDbfs)}. That is what fuzz, square waves and clipping on purpose look like.`,
       why: 'It is good to know that it is meant.',
       how: 'Nothing has to be done if it should sound like that. If not, export it again with less level.',
     }),
