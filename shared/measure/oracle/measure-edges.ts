@@ -29,8 +29,8 @@ function describeEdge(edge: Float64Array): RawEdge {
 }
 
 /**
- * Whether a stretch, from its outermost sample inwards, comes out of silence: a fade of a
- * millisecond or more does, a sound that was cut does not. Silence itself does.
+ * Whether a stretch, from its outermost sample inwards, comes out of silence: a fade of two
+ * milliseconds or more does, a sound that was cut does not. Silence itself does.
  */
 export function isRamp(edge: Float64Array): boolean {
   const peak = peakOf(edge);
