@@ -2,6 +2,7 @@ import type { BoundedReader } from '../bytes/bounded-reader.ts';
 import { decodeChunkText } from './chunk-text.ts';
 import { maxChannels } from './format-limits.ts';
 import { readAiffMarkers } from './read-markers.ts';
+import { isStreamedSize } from './streamed-size.ts';
 import type { TrackFormat, UnreadableReason, WaveReading } from './track-format.ts';
 import { chunkContents, chunkId, placeOf, walkChunks } from './walk-chunks.ts';
 
@@ -122,11 +123,14 @@ export async function readAiff(
   reader: BoundedReader,
   container: 'aiff' | 'aifc',
 ): Promise<WaveReading> {
+  let streamed = false;
   const { chunks, endOffset } = await walkChunks(reader, 12, true, (header) => {
     const { id, declaredBytes, contentOffset } = header;
-    // Even without audio SSND holds 8 bytes: these sizes mean that nobody came back to fill it in.
-    const streamed = declaredBytes === 0 || declaredBytes >= 0xffffe000;
-    return id === 'SSND' && streamed ? reader.size - contentOffset : declaredBytes;
+    const available = reader.size - contentOffset;
+    if (id !== 'SSND') return declaredBytes;
+    // Even without audio SSND holds 8 bytes: zero is nobody's meaning.
+    streamed = declaredBytes === 0 || isStreamedSize(declaredBytes, available);
+    return streamed ? available : declaredBytes;
   });
   const unreadable = (reason: UnreadableReason, byteOffset: number): WaveReading => ({
     kind: 'unreadable',
@@ -153,7 +157,8 @@ export async function readAiff(
   const dataOffset = ssnd.contentOffset + 8 + lead;
   const bytesPerFrame = (comm.encoding.containerBits / 8) * comm.encoding.channels;
   const available = Math.max(0, ssnd.contentOffset + ssnd.contentBytes - dataOffset);
-  const promised = comm.promisedFrames === 0 ? null : comm.promisedFrames * bytesPerFrame;
+  const isPromised = !streamed && comm.promisedFrames > 0;
+  const promised = isPromised ? comm.promisedFrames * bytesPerFrame : null;
   const frames = Math.floor(Math.min(available, promised ?? available) / bytesPerFrame);
   if (frames === 0) return unreadable('no-audio-in-data', Math.min(dataOffset, reader.size));
 

@@ -3,6 +3,7 @@ import { readUint64 } from '../bytes/read-uint64.ts';
 import { otherFormatTags } from './format-tags.ts';
 import { readFmt, type FmtReading } from './read-fmt.ts';
 import { readRiffMetadata } from './read-riff-metadata.ts';
+import { isStreamedSize } from './streamed-size.ts';
 import type { WaveReading } from './track-format.ts';
 import { placeOf, walkChunks, type WalkedChunk } from './walk-chunks.ts';
 
@@ -22,19 +23,6 @@ function readDs64(bytes: Uint8Array): Ds64 | null {
     table.set(String.fromCharCode(...bytes.subarray(at, at + 4)), readUint64(view, at + 4));
   }
   return { dataBytes: readUint64(view, 8), table };
-}
-
-/**
- * Programs that write to a pipe cannot come back to fill in the size, so they leave 0, the
- * largest number, or a large round one (sox: 0x7ffff000 in whole frames). Nothing is promised
- * then: the audio runs to the end of the file.
- */
-function isStreamedSize(declaredBytes: number, available: number): boolean {
-  if (declaredBytes === sizeElsewhere || !Number.isSafeInteger(declaredBytes)) return true;
-  if (declaredBytes <= available) return false;
-  const nearHalf = declaredBytes >= 0x7fffe000 && declaredBytes <= 0x80000000;
-  const nearFull = declaredBytes >= 0xffffe000 && declaredBytes < sizeElsewhere;
-  return nearHalf || nearFull;
 }
 
 /**

@@ -260,3 +260,20 @@ for path in sys.argv[1:]:
     expect(timeReferenceFrames).toBe(172_800_000);
   });
 });
+
+describe('files written to a pipe, whose writers could not come back', () => {
+  const raw = 'head -c 6000 /dev/zero | sox -t raw -r 48000 -e signed -b 24 -c 1 -';
+  it.each([
+    ['sox, WAV', `${raw} -t wav -`],
+    ['sox, AIFF', `${raw} -t aiff -`],
+    ['ffmpeg, WAV', `${raw} -t wav - | ffmpeg -v error -i - -c:a pcm_s24le -f wav -`],
+    ['ffmpeg, AIFF', `${raw} -t wav - | ffmpeg -v error -i - -c:a pcm_s24be -f aiff -`],
+  ])('%s', async (_name, pipe) => {
+    const path = join(folder, 'piped');
+    await run('sh', ['-c', `(${pipe}) 2>/dev/null | cat > "${path}"`]);
+    const { format, layout } = await readTrack(await readFile(path), 'piped.wav');
+    // 6000 bytes of three a frame.
+    expect(format).toMatchObject({ sampleRateHz: 48000, bits: 24, channels: 1, frames: 2000 });
+    expect(layout.promisedDataBytes).toBeNull();
+  });
+});
