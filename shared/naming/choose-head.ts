@@ -112,17 +112,16 @@ export function chooseHead(words: readonly Word[], hint: GroupNature | null): He
       hit.instrument === chosen ||
       (hit.instrument.general && hit.instrument.nature === chosen.nature),
   );
-  const borrowed = hits.some(
+  // A guitar pad may be a pad and not a guitar; a drum beside a bass may be what is meant.
+  const doubted = hits.some(
     (hit) =>
-      hit.instrument !== chosen &&
-      hit.instrument.nature === 'synths' &&
-      chosen.nature !== 'synths' &&
-      hit.standing !== 'unsure',
+      hit.instrument.nature !== chosen.nature &&
+      (hit.standing === 'unsure' ? !hit.describes : hit.instrument.nature === 'synths'),
   );
   return {
     instrument: chosen,
     indexes: new Set(own.map((hit) => hit.index)),
-    sure: certain && !borrowed,
+    sure: certain && !doubted,
     plain: sure,
   };
 }

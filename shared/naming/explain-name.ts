@@ -1,10 +1,7 @@
 import type { NameToken, NamingRules } from '../rules/naming-rules.ts';
 import { groupText, inCase, padNumber } from './compose-name.ts';
-import { instrumentMeanings } from './choose-head.ts';
-import { lexiconOf } from './lexicon.ts';
 import { groupCandidates, parseName } from './parse-name.ts';
 import type { NameSpan, ParsedName } from './parsed-name.ts';
-import { readWords } from './read-words.ts';
 import { bareName, nameRuns, type NameRun } from './split-name.ts';
 import { firstOutOfOrder, tokenOf } from './token-order.ts';
 
@@ -88,23 +85,13 @@ function explainGroup(name: string, parsed: ParsedName, naming: NamingRules, add
   }
 }
 
-function explainInstrument(parsed: ParsedName, naming: NamingRules, add: Add): void {
-  if (parsed.instrument === null) {
-    add('instrument', 'unknown');
-    return;
+function explainInstrument(parsed: ParsedName, add: Add): void {
+  const span = spanOf(parsed, 'instrument');
+  if (parsed.instrument === null) add('instrument', 'unknown');
+  else if (!span) add('instrument', 'missing', { expected: parsed.instrument });
+  else if (parsed.misspelt) {
+    add('instrument', 'misspelt', { found: span.text, expected: parsed.instrument });
   }
-  const lexicon = lexiconOf(naming.groups);
-  const spans = parsed.spans.filter((span) => span.kind === 'instrument');
-  for (const span of spans) {
-    const { words } = readWords(span.text, lexicon.tries);
-    const meanings = words.flatMap(instrumentMeanings);
-    const misspelt =
-      meanings.length > 0 && meanings.every(({ standing }) => standing === 'misspelt');
-    if (misspelt) {
-      add('instrument', 'misspelt', { found: span.text, expected: parsed.instrument });
-    }
-  }
-  if (spans.length === 0) add('instrument', 'missing', { expected: parsed.instrument });
 }
 
 function explainPlaces(parsed: ParsedName, naming: NamingRules, add: Add): void {
@@ -205,7 +192,7 @@ export function examineName(
   const add: Add = (token, reason, args = {}) => failures.push({ token, reason, args });
   explainNumber(parsed, naming, add);
   explainGroup(name, parsed, naming, add);
-  explainInstrument(parsed, naming, add);
+  explainInstrument(parsed, add);
   explainPlaces(parsed, naming, add);
   explainSeparators(name, parsed, naming, add);
   explainCase(name, parsed, naming, add);

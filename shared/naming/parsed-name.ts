@@ -46,6 +46,8 @@ export type ParsedName = {
   nature: GroupNature | null;
   /** Written form from the vocabulary (`Lead Vocal`) or a word of the table's own; null: unknown. */
   instrument: string | null;
+  /** Understood, but not written as anybody should: `Kik`. */
+  misspelt: boolean;
   /** Which of several alike: 2 in `Tom 2`. */
   ordinal: number | null;
   /** Written forms in the order of the name; a number behind one belongs to it: `Verse 2`. */

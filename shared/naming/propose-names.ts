@@ -128,6 +128,9 @@ function namesToKeep(parts: readonly Part[], naming: NamingRules): Map<Part, str
   for (const part of parts) {
     const { parsed } = part.file;
     const name = bareName(part.file.path);
+    // Asked first because it is cheap: most names that are not kept have one of these.
+    if (parsed.leftovers.some(({ kind }) => kind !== 'unknown')) continue;
+    if (naming.tokens.includes('number') !== (parsed.number !== null)) continue;
     if (parsed.number !== null && numbers.has(parsed.number)) continue;
     if (!explainName(name, naming).ok || checkPortability(name).length > 0) continue;
     const body = clashKey(withoutNumber(name, parsed));

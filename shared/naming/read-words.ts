@@ -58,9 +58,12 @@ function priceOf(text: NameText, form: Form, at: number): number | null {
     }
     if (isBreak) {
       // A single letter of a phrase must stand out, or the phrase be long: `egtr`, not `snt`.
-      const open = i === length ? false : text.boundary[at + i] === glued;
-      const before = wordStart > 0 && text.boundary[at + wordStart] === glued;
-      if (i - wordStart === 1 && (open || before) && length < 4) return null;
+      const after = text.boundary[at + i] === glued;
+      const before = text.boundary[at + wordStart] === glued;
+      const atEdge = (after && i === length) || (before && wordStart === 0);
+      const alone = i - wordStart === 1 && length > 1;
+      if (alone && (after || before) && (length < 4 || atEdge)) return null;
+
       wordStart = i;
     }
   }
@@ -128,12 +131,21 @@ function wordOf(text: NameText, step: Step, to: number): Word {
 
 const strongEnough = 3;
 
+function textOf(text: NameText, words: readonly Word[]): string {
+  return text.name.slice(words[0]?.start, words.at(-1)?.end);
+}
+
+function isCapitals(run: string): boolean {
+  return run === run.toUpperCase() && run !== run.toLowerCase();
+}
+
 /** What a run of glued words is worth: read as it is, only a guess, or better left unknown. */
 function judgeGlue(text: NameText, words: readonly Word[]): 'good' | 'doubtful' | 'bad' {
   const isInstrument = (word: Word) => word.meanings.some((m) => m.kind === 'instrument');
   const named = words.filter(isInstrument);
   if (named.length === 0) {
-    return words.every((word) => word.to - word.from >= strongEnough) ? 'good' : 'bad';
+    const least = isCapitals(textOf(text, words)) ? 2 : strongEnough;
+    return words.every((word) => word.to - word.from >= least) ? 'good' : 'bad';
   }
   const surely = (word: Word) =>
     word.to - word.from >= strongEnough &&
@@ -142,8 +154,8 @@ function judgeGlue(text: NameText, words: readonly Word[]): 'good' | 'doubtful' 
   const first = words[0];
   const last = words.at(-1);
   if (!first || !last) return 'bad';
-  const run = text.name.slice(first.start, last.end);
-  if (run === run.toUpperCase() && run !== run.toLowerCase()) return 'good';
+  if (isCapitals(textOf(text, words))) return 'good';
+
   return last.to - first.from >= 4 ? 'doubtful' : 'bad';
 }
 

@@ -57,6 +57,7 @@ class NameReader {
       groupId: null,
       nature: null,
       instrument: null,
+      misspelt: false,
       ordinal: null,
       detail: [],
       side: null,
@@ -206,11 +207,9 @@ class NameReader {
 
   private readInstrument(word: Word, instrument: Instrument): void {
     this.span('instrument', word);
-    for (const meaning of instrumentMeanings(word)) {
-      if (meaning.adds !== null && meaning.instrument === instrument) {
-        this.addDetail(meaning.adds, null);
-      }
-    }
+    const meaning = instrumentMeanings(word).find((m) => m.instrument === instrument);
+    if (meaning?.standing === 'misspelt') this.parsed.misspelt = true;
+    if (meaning && meaning.adds !== null) this.addDetail(meaning.adds, null);
     this.last = 'instrument';
   }
 
@@ -228,6 +227,12 @@ class NameReader {
     const side = word.meanings.find((m) => m.kind === 'side');
     const describing = instrumentMeanings(word).find((m) => m.instrument.detail !== null);
     const leftover = word.meanings.find((m) => m.kind === 'leftover');
+    // `Ch 3` in front is a channel; behind a voice, Ch is its chorus.
+    const counted = this.last === 'nothing' && this.words[index + 1]?.digits != null;
+    if (leftover && counted) {
+      this.leftOver(leftover.leftover, word);
+      return true;
+    }
     if (side && this.readSide(word, side.side, index)) return true;
     if (detail) this.addDetail(detail.detail.written, word);
     else if (describing?.instrument.detail) {
@@ -248,7 +253,8 @@ class NameReader {
     const something = this.last !== 'nothing' || anywhere;
     const late = anywhere || (something && this.endsName(index));
     if (lateSides.has(side)) {
-      if (!late) return false;
+      if (!late && !(something && !short && side === 'stereo')) return false;
+
       if (short && side !== 'stereo') this.guessed = true;
     } else if (short && !something) {
       if (this.words.length === 1) return false;

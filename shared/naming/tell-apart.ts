@@ -38,6 +38,16 @@ function byTake(parts: readonly Part[], naming: NamingRules): readonly Part[] {
   });
 }
 
+/** A mono file beside a stereo file of the same name says that it is mono. */
+function byChannels(parts: readonly Part[], naming: NamingRules): readonly Part[] {
+  const stereo = parts.some(({ file }) => file.channels !== null && file.channels > 1);
+  if (!stereo || !naming.tokens.includes('detail')) return parts;
+  return parts.map((part) => {
+    const tells = part.file.channels === 1 && !part.details.includes('Mono');
+    return tells ? withDetail(part, 'Mono') : part;
+  });
+}
+
 /** `_01`, `_02` at the end of names that are otherwise the same were ordinals after all. */
 function byCounter(parts: readonly Part[]): readonly Part[] {
   const counters = parts.map(({ file }) => file.parsed.counter);
@@ -51,8 +61,8 @@ function byCounter(parts: readonly Part[]): readonly Part[] {
 }
 
 /**
- * Gives parts that would be called the same what tells them apart: the take that was written, a
- * counter, else an ordinal in the order of the parts; where there is an ordinal already, `Alt`.
+ * Gives parts that would be called the same what tells them apart: the take that was written, mono
+ * beside stereo, a counter, else an ordinal in the order of the parts; where there is an ordinal already, `Alt`.
  * `isFree` tells whether nobody else has a name; a part that is the only one of its name stays.
  */
 export function tellApart(
@@ -75,7 +85,7 @@ export function tellApart(
     else several.push(bucket);
   }
   for (const bucket of several) {
-    for (const group of buckets(byTake(bucket, naming), naming)) {
+    for (const group of buckets(byChannels(byTake(bucket, naming), naming), naming)) {
       const [only] = group;
       if (group.length === 1 && only && free(only)) settle(only);
       else for (const part of byCounter(group)) settle(numbered(part, naming, free, counted));

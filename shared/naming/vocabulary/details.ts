@@ -36,6 +36,7 @@ export const details: readonly DetailEntry[] = [
     forms: 'octave, oct, octaves, octv, oktave, 8va, 8ve, octava, octav',
   },
   { written: 'Harmony', short: 'Harm', forms: 'harmony, harm, harmonies, harms' },
+  { written: 'Harmonics', short: 'Hmcs', forms: 'harmonics, hmcs, flageolet, armonicos' },
   { written: 'Third', short: '3rd', forms: 'third, 3rd, thirds, terz' },
   { written: 'Fifth', short: '5th', forms: 'fifth, 5th, fifths, quint' },
   { written: 'Left Hand', short: 'LH', forms: 'left hand, lh, l hand, linke hand' },
@@ -67,6 +68,7 @@ export const details: readonly DetailEntry[] = [
   { written: 'Open', short: 'Open', forms: 'open, offen, opened, abierto' },
   { written: 'Closed', short: 'Cls', forms: 'closed, cls, geschlossen, clsd, cerrado' },
   { written: 'Pedal', short: 'Ped', forms: 'pedal, ped, foot' },
+  { written: 'Rim', short: 'Rim', forms: 'rim, rims' },
   { written: 'Bell', short: 'Bell', forms: 'bell, bells' },
   { written: 'Edge', short: 'Edge', forms: 'edge, edges' },
   { written: 'Beater', short: 'Btr', forms: 'beater, beater side, batter' },
@@ -102,7 +104,7 @@ export const details: readonly DetailEntry[] = [
     written: 'Chorus',
     short: 'Cho',
     forms:
-      'chorus, cho, chor, chrs, chorous, refrain, estribillo, ritornello, chs, chr, coro, choruses, ref refrain',
+      'chorus, cho, chor, chrs, chorous, refrain, estribillo, ritornello, chs, chr, ch, coro, choruses, ref refrain',
   },
   { written: 'Post Chorus', short: 'Post', forms: 'post chorus, post, post refrain' },
   { written: 'Hook', short: 'Hook', forms: 'hook, hooks' },
@@ -155,7 +157,7 @@ export const details: readonly DetailEntry[] = [
     written: 'Amp',
     short: 'Amp',
     forms:
-      'amp, amped, amps, cab, cabinet, cabs, verstaerker, ampli, amplifier, speaker, spkr, micd amp, amplificador',
+      'amp, amped, amps, cab, cabinet, cabs, verstaerker, ampli, amplifier, spkr, micd amp, amplificador',
   },
   {
     written: 'Mic',
@@ -169,7 +171,7 @@ export const details: readonly DetailEntry[] = [
     written: 'Distorted',
     short: 'Dist',
     forms:
-      'distorted, dist, distortion, dst, disto, overdrive, overdriven, od, ovd, drive, driven, dirty, dirt, distor, distorsion, verzerrt, distorsionada, heavy, saturated',
+      'distorted, dist, distortion, dst, disto, overdrive, overdriven, ovd, drive, driven, dirty, dirt, distor, distorsion, verzerrt, distorsionada, heavy, saturated',
   },
   { written: 'Fuzz', short: 'Fuzz', forms: 'fuzz, fuzzy, fzz' },
   { written: 'Twang', short: 'Twng', forms: 'twang, twng, twangy' },

@@ -66,6 +66,8 @@ export const guitars: readonly InstrumentEntry[] = [
   },
   { written: 'Ukulele', short: 'Uke', forms: 'ukulele, uke, ukelele, uku' },
   { written: 'Bouzouki', short: 'Bzk', forms: 'bouzouki, bzk, buzuki' },
+  { written: 'Dulcimer', short: 'Dulc', forms: 'dulcimer, dulc, hackbrett' },
+  { written: 'Koto', short: 'Koto', forms: 'koto' },
   { written: 'Oud', short: 'Oud', forms: 'oud' },
   { written: 'Sitar', short: 'Sitr', forms: 'sitar, sitr' },
   {

@@ -4,7 +4,7 @@ export const keys: readonly InstrumentEntry[] = [
   {
     written: 'Electric Piano',
     short: 'EP',
-    forms: `(electric|elec|elect|el|e|electr|elektro) (piano|pno|pn), e p, piano electrique,
+    forms: `(electric|elec|elect|el|e|electr|elektro) (piano|pno|pn), electric grand, electric grand piano, e p, piano electrique,
       piano electrico, piano elettrico, (piano|pno) (elec|electric)`,
     misspelt: 'eletric piano, elecric piano',
     unsure: 'ep, epn',

@@ -24,6 +24,7 @@ export const orchestra: readonly InstrumentEntry[] = [
     misspelt: 'chello, celo, cellp',
     unsure: 'vc',
   },
+  { written: 'Erhu', short: 'Erhu', forms: 'erhu' },
   {
     written: 'String Quartet',
     short: 'SQt',
@@ -56,6 +57,8 @@ export const orchestra: readonly InstrumentEntry[] = [
     forms: 'french horn, fr hn, fr horn, f horn, waldhorn',
     unsure: 'fhn, hn, cor',
   },
+  { written: 'Cornet', short: 'Cnt', forms: 'cornet, kornett, corneta, cornetta, cnt' },
+  { written: 'Euphonium', short: 'Euph', forms: 'euphonium, euph, bombardino' },
   { written: 'Tuba', short: 'Tuba', forms: 'tuba, sousaphone, sousaphon, sousafon' },
   { written: 'Alto Sax', short: 'ASax', forms: `(alto|a|alt) ${sax}, ${sax} (alto|alt)` },
   { written: 'Tenor Sax', short: 'TSax', forms: `(tenor|ten|t|tnr) ${sax}, ${sax} (tenor|ten)` },
@@ -88,7 +91,7 @@ export const orchestra: readonly InstrumentEntry[] = [
     written: 'Flute',
     short: 'Flt',
     forms:
-      'flute, flt, floete, flote, quer floete, querflote, flauta, flauto, fluete, alto flute, bass flute',
+      'flute, flt, floete, flote, quer floete, querflote, flauta, flauto, fluete, alto flute, bass flute, pan flute, panfloete',
     misspelt: 'flut, fulte',
     unsure: 'fl',
   },
@@ -104,7 +107,7 @@ export const orchestra: readonly InstrumentEntry[] = [
   {
     written: 'Bagpipes',
     short: 'Bagp',
-    forms: 'bagpipes, bagpipe, bag pipes, bagp, dudelsack, gaita',
+    forms: 'bagpipes, bagpipe, bag pipe, bag pipes, bagp, dudelsack, gaita',
   },
   {
     written: 'Harmonica',
@@ -142,7 +145,7 @@ export const orchestra: readonly InstrumentEntry[] = [
     written: 'Strings',
     short: 'Str',
     forms:
-      'strings, string section, strs, streicher, cordes, cuerdas, archi, strngs, string, stgs, string ensemble',
+      'strings, string section, strs, streicher, cordes, cuerdas, archi, strngs, string, strg, stgs, string ensemble',
     misspelt: 'stirngs, srtings',
     unsure: 'str, stg, cuerda',
     general: true,

@@ -50,7 +50,7 @@ export const leftoverWords: Readonly<Partial<Record<LeftoverKind, string>>> = {
   'export-word': `track, trk, tr, trak, spur, piste, pista, audio, aud, audio track, channel, chan, canal, kanal,
     ch, file, region, clip, untitled, unnamed, unbenannt, sans titre, sin titulo, consolidated, consolidate, consol, cons, bounce,
     bounced, bnc, bip, bounced in place, bounce in place, render, rendered, rendering, renders, export,
-    exported, exports, freeze, frozen, merged, merge, glued, voice memo, voice memos, memo, flattened, flatten, flat, rec, recording,
+    exported, exports, freeze, frozen, merged, merge, glued, normalized, normalised, norm, voice memo, voice memos, memo, flattened, flatten, flat, rec, recording,
     recorded, record, stem, stems, multitrack, multitracks, multi track, wav, wave, aif, aiff,
     session, project, output, inst track, midi, instrument track, from zero, from start`,
   version: `final, finale, finals, finished, final version, new, neu, nuevo, nueva, nouveau, nuovo,

@@ -45,6 +45,7 @@ export const percussion: readonly InstrumentEntry[] = [
   { written: 'Taiko', short: 'Taik', forms: 'taiko, taik' },
   { written: 'Bodhran', short: 'Bodh', forms: 'bodhran, bodh' },
   { written: 'Frame Drum', short: 'FrDr', forms: 'frame drum, fr dr, rahmentrommel' },
+  { written: 'Hand Drum', short: 'HDrm', forms: 'hand drum, h drm, handtrommel' },
   { written: 'Udu', short: 'Udu', forms: 'udu' },
   { written: 'Pandeiro', short: 'Pand', forms: 'pandeiro, pand' },
   { written: 'Cuica', short: 'Cuic', forms: 'cuica, cuic' },
@@ -62,7 +63,7 @@ export const percussion: readonly InstrumentEntry[] = [
   {
     written: 'Bells',
     short: 'Bell',
-    forms: 'bells, bell, glocken, campanas, cloches, campane',
+    forms: 'bells, bell, hand bells, hand bell, school bell, glocken, campanas, cloches, campane',
     detail: 'Bell',
   },
   {

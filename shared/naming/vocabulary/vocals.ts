@@ -92,9 +92,10 @@ export const vocals: readonly InstrumentEntry[] = [
   {
     written: 'Vocal',
     short: 'Vox',
-    forms: `${vocal}, voxs, voxes, vocales, voces, voci, stimmen, singer, singing, sung`,
+    forms: `${vocal}, voxs, voxes, vocalist, vocalists, vocales, voces, voci, stimmen, singer, singing, sung`,
     misspelt: 'vocla, voacl, vocasl, vovals, vocls, volca, vxo',
-    unsure: 'acapella, a cappella, a capella, acappella, vcs',
+    unsure:
+      'scream +Scream, screams +Scream, screamer +Scream, acapella, a cappella, a capella, acappella, vcs',
     general: true,
   },
 ];

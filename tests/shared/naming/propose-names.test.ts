@@ -125,6 +125,17 @@ describe('proposeNames', () => {
     });
   });
 
+  it('tells a mono file from a stereo file of the same name', () => {
+    const files = filesOf(['pno.wav', 'piano_new.wav'], plain).map((file, index) => ({
+      ...file,
+      channels: 2 - index,
+    }));
+    expect(Object.fromEntries(proposeNames(files, plain, noSong))).toEqual({
+      'pno.wav': 'Piano',
+      'piano_new.wav': 'Piano Mono',
+    });
+  });
+
   it('keeps words of the artist, but not those that every file has', () => {
     expect(
       propose(['NBN_kik.wav', 'NBN_gtr Sol.wav', 'NBN_gtr Juno.wav', 'NBN_lv.wav'], plain),
@@ -194,7 +205,7 @@ describe('proposeNames', () => {
       }),
       { numRuns: 200 },
     );
-  });
+  }, 60_000);
 
   it('is the same for the same files, and proposes its own proposals again', () => {
     fc.assert(
@@ -214,7 +225,7 @@ describe('proposeNames', () => {
       ),
       { numRuns: 150 },
     );
-  });
+  }, 60_000);
 
   it('names 2,000 files with thousands of clashes in reasonable time', () => {
     const names = Array.from(

@@ -54,7 +54,7 @@ describe('the vocabulary', () => {
         expect(parsed.instrument, written(form)).toBe(meaning.instrument.written);
       }
     }
-  });
+  }, 60_000);
 
   it('reads every detail back beside a guitar, written and short', () => {
     for (const { entry } of detailRanks.values()) {
