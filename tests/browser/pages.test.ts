@@ -69,6 +69,15 @@ const openPages: Visit[] = [
       await expect(page.getByRole('menu')).toBeVisible();
     },
   },
+  {
+    path: '/design',
+    heading: 'Design language',
+    state: 'with a toast',
+    then: async (page) => {
+      await page.getByRole('button', { name: 'Toast', exact: true }).click();
+      await expect(page.getByText('Link copied.')).toBeVisible();
+    },
+  },
 ];
 
 const marensPages: Visit[] = [
