@@ -2,7 +2,7 @@ import type { InstrumentGroup, NamingRules } from '../rules/naming-rules.ts';
 import { findExportMarks, findSongWords, type ExportMark } from './export-marks.ts';
 import { foldName } from './fold-name.ts';
 import { lexiconOf, type Lexicon } from './lexicon.ts';
-import type { NameSpan, ParsedName } from './parsed-name.ts';
+import type { ParsedName } from './parsed-name.ts';
 import { readFolder, type FolderHint } from './read-folder.ts';
 import { readWords, type Word } from './read-words.ts';
 import { resolveWords, type NameFrame } from './resolve-words.ts';
@@ -129,9 +129,4 @@ export function parseName(
     marks: findExportMarks(name),
   };
   return readByConvention(reading) ?? resolve(reading, null, { numberStart: null });
-}
-
-/** The spans of one kind, in the order of the name. */
-export function spansOf(parsed: ParsedName, kind: NameSpan['kind']): NameSpan[] {
-  return parsed.spans.filter((span) => span.kind === kind);
 }
