@@ -155,7 +155,7 @@ describe('a zip that cannot be trusted is refused as a whole', () => {
       refused('too-large'),
     );
     // A silent track on its own packs by a thousand to one and is no bomb.
-    const silence = { ...bomb, bytes: Buffer.alloc(30 << 20) };
+    const silence = { ...bomb, bytes: Buffer.alloc(4 << 20) };
     expect((await open(buildZip([silence]))).files).toHaveLength(1);
   });
 });
