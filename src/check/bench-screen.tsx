@@ -17,6 +17,7 @@ import { ReadingProgressBar } from './reading-progress.tsx';
 import { ReportHeader } from './report-header.tsx';
 import { ReportView } from './report-view.tsx';
 import { SaveBar } from './save-bar.tsx';
+import { SongDetails } from './song-details.tsx';
 import { SongFields } from './song-fields.tsx';
 import { StoreReport } from './store-report-button.tsx';
 import { allFindings, type ViewedSession } from './viewed-session.ts';
@@ -96,7 +97,7 @@ function BusyBench({ bench, state, view, edition, projectId }: BusyBenchProps) {
     <div className="flex grow flex-col">
       <ReportHeader title={title} view={view} reading={state.reading}>
         <Button aria-expanded={fieldsShown} onClick={() => setFieldsShown(!fieldsShown)}>
-          Artist, song, tempo
+          Song details
         </Button>
         {open.length > 0 && (
           <Button kind="primary" onClick={() => bench.choose(open)}>
@@ -105,8 +106,12 @@ function BusyBench({ bench, state, view, edition, projectId }: BusyBenchProps) {
         )}
       </ReportHeader>
       {fieldsShown && (
-        <div className="max-w-3xl px-4 pb-6 sm:px-7">
-          <SongFields information={state.information} onChange={bench.setInformation} />
+        <div className="px-4 pb-6 sm:px-7">
+          <SongDetails
+            information={state.information}
+            rules={bench.rules}
+            onChange={bench.setInformation}
+          />
         </div>
       )}
       {!checked && (

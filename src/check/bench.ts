@@ -38,7 +38,7 @@ const typingMs = 400;
 export class Bench {
   private state: BenchState = waitingBench;
   private readonly listeners = new Set<() => void>();
-  private readonly rules: HouseRules;
+  readonly rules: HouseRules;
   private files: FileToRead[] = [];
   /** What was measured, by the file's stamp: a file that did not change is not read again. */
   private measured = new Map<string, MeasuredFile>();

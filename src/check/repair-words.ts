@@ -29,3 +29,18 @@ export const takenWords: Record<RepairKind, string> = {
   move: 'Will be moved',
   'high-pass': 'Will be centred',
 };
+
+/** The same, as a short note in a list of what is packed. */
+export const repairDone: Record<RepairKind, string> = {
+  rename: 'renamed',
+  'rewrite-container': 'rewritten as WAV, same samples',
+  split: 'split to mono',
+  join: 'joined to stereo',
+  'keep-one-side': 'one side kept',
+  'add-silence': 'silence added at the end',
+  'leave-out': 'left out',
+  fade: 'faded',
+  gain: 'turned down',
+  move: 'moved to the common start',
+  'high-pass': 'centred by a high-pass',
+};

@@ -1,21 +1,26 @@
 import { queryOptions, useQuery } from '@tanstack/react-query';
-import { useMemo } from 'react';
+import { useState } from 'react';
 import { useParams } from 'react-router-dom';
-import { getOverviews, getReport, type StoredReport } from '#shared/api/reports.ts';
+import {
+  getOverviews,
+  getReport,
+  listSongReports,
+  type StoredReport,
+} from '#shared/api/reports.ts';
 import type { Overview } from '#shared/measure/overview.ts';
-import { defaultRules } from '#shared/rules/starter-sets.ts';
+import { compareReports } from '#shared/report/compare-reports.ts';
 import { readOverviews } from '#shared/report/stored-overviews.ts';
 import { call } from '../app/api-client.ts';
-import { dayWords } from '../app/moments.ts';
+import { dayWords, momentWords } from '../app/moments.ts';
 import { usePageTitle } from '../app/page-title.ts';
 import { Page } from '../app/shell.tsx';
 import { gunzip } from '../browser/gzip.ts';
-import { ErrorNotice, LoadingState } from '../ui/states.tsx';
-import { ReportHeader } from './report-header.tsx';
-import { ReportView } from './report-view.tsx';
-import { inGroupOrder } from './viewed-session.ts';
+import { Button } from '../ui/button.tsx';
+import { LoadingState } from '../ui/states.tsx';
+import { ShareReport } from './share-report.tsx';
+import { rulesWords, StoredReportView } from './stored-report.tsx';
 
-const noOverviews: ReadonlyMap<string, Overview> = new Map();
+export const noOverviews: ReadonlyMap<string, Overview> = new Map();
 
 function reportQuery(reportId: string) {
   return queryOptions({
@@ -27,14 +32,30 @@ function reportQuery(reportId: string) {
   });
 }
 
-function overviewsQuery(reportId: string) {
+function overviewsQuery(reportId: string, exist: boolean) {
   return queryOptions({
     queryKey: ['reports', reportId, 'overviews'],
-    queryFn: async ({ signal }) =>
-      readOverviews(
-        await gunzip(new Uint8Array(await call(getOverviews, { params: { reportId } }, signal))),
-      ),
+    queryFn: async ({ signal }) => {
+      const bytes = await call(getOverviews, { params: { reportId } }, signal);
+      return readOverviews(await gunzip(new Uint8Array(bytes)));
+    },
+    enabled: exist,
     staleTime: Infinity,
+  });
+}
+
+/** The stored check of the same song before this one; null for the first. */
+function earlierReportQuery(stored: StoredReport | undefined) {
+  return queryOptions({
+    queryKey: ['reports', stored?.id, 'earlier'],
+    enabled: stored !== undefined,
+    queryFn: async ({ signal }): Promise<StoredReport | null> => {
+      const { id, songId } = stored!;
+      const { items } = await call(listSongReports, { params: { songId }, query: {} }, signal);
+      const earlier = items[items.findIndex((report) => report.id === id) + 1];
+      if (!earlier || items.every((report) => report.id !== id)) return null;
+      return call(getReport, { params: { reportId: earlier.id } }, signal);
+    },
   });
 }
 
@@ -42,20 +63,11 @@ function overviewsQuery(reportId: string) {
 export function ReportPage() {
   const { reportId = '' } = useParams();
   const { data: stored } = useQuery(reportQuery(reportId));
-  const { data: overviews } = useQuery({
-    ...overviewsQuery(reportId),
-    enabled: stored?.hasOverviews === true,
-  });
+  const { data: overviews } = useQuery(overviewsQuery(reportId, stored?.hasOverviews === true));
+  const { data: earlier } = useQuery(earlierReportQuery(stored));
+  const [sharing, setSharing] = useState(false);
   usePageTitle(stored?.songTitle ?? 'Report');
-  const view = useMemo(
-    () =>
-      stored && {
-        ...stored.report,
-        files: inGroupOrder(stored.report.files, defaultRules),
-      },
-    [stored],
-  );
-  if (!stored || !view) {
+  if (!stored) {
     return (
       <Page>
         <LoadingState words="Loading the report…" />
@@ -63,41 +75,29 @@ export function ReportPage() {
     );
   }
   return (
-    <div className="flex grow flex-col">
-      <ReportHeader title={stored.songTitle} view={view} />
-      <div className="px-4 pb-6 text-small text-ink-2 sm:px-7">
-        <p>{provenance(stored)}</p>
-        <Differences stored={stored} />
-      </div>
-      <ReportView view={view} overviews={overviews ?? noOverviews} />
-    </div>
+    <StoredReportView
+      stored={stored}
+      overviews={overviews ?? noOverviews}
+      provenance={`Checked by ${stored.createdBy.name} on ${dayWords(stored.createdAt)}, against ${rulesWords(stored)}.`}
+      actions={
+        <>
+          <Button onClick={() => setSharing(true)}>Share</Button>
+          <ShareReport reportId={reportId} open={sharing} onOpenChange={setSharing} />
+        </>
+      }
+    >
+      {earlier && <SinceEarlier earlier={earlier} later={stored} />}
+    </StoredReportView>
   );
 }
 
-function provenance({ createdBy, createdAt, rulesEdition }: StoredReport): string {
-  const rules = rulesEdition
-    ? `the house rules of ${rulesEdition.studioName}, edition ${String(rulesEdition.number)}`
-    : 'rules that no studio published';
-  return `Checked by ${createdBy.name} on ${dayWords(createdAt)}, against ${rules}.`;
-}
-
-/** What the server found when it judged the same measures itself. */
-function Differences({ stored }: { stored: StoredReport }) {
-  if (stored.judgedAgain === 'same') return <p>Judged again here, with the same result.</p>;
-  if (stored.judgedAgain === 'not-compared') {
-    return <p>Made by another version of Flightcase, so it was not judged again.</p>;
-  }
+/** What became of the findings since the check before. */
+function SinceEarlier({ earlier, later }: { earlier: StoredReport; later: StoredReport }) {
+  const { fresh, mended, remaining } = compareReports(earlier.report, later.report);
   return (
-    <ErrorNotice title="This report says something else than its own measures.">
-      <ul className="list-disc ps-5">
-        {stored.differences.map(({ code, files, sentLevel, judgedLevel }) => (
-          <li key={`${code} ${files.join()}`}>
-            {code.replaceAll('-', ' ')} {files.join(', ')}: sent as{' '}
-            {sentLevel?.replace('-', ' ') ?? 'nothing'}, judged as{' '}
-            {judgedLevel?.replace('-', ' ') ?? 'nothing'}
-          </li>
-        ))}
-      </ul>
-    </ErrorNotice>
+    <p>
+      Since the check of {momentWords(earlier.createdAt)}: {fresh.length} new, {mended.length}{' '}
+      mended, {remaining.length} still there.
+    </p>
   );
 }

@@ -99,9 +99,9 @@ export function SaveBar({ bench, report, children }: SaveBarProps) {
         open={listShown}
         onOpenChange={setListShown}
         title="Packing list"
-        description="What goes into the zip, under which name. Your files on disk stay as they are."
+        description="What goes into the zip, under which name. Change a name here, or say what a file is. Your files on disk stay as they are."
       >
-        <PackingList report={report} />
+        <PackingList report={report} onChange={bench.setInformation} />
       </Dialog>
     </footer>
   );
