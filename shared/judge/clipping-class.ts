@@ -1,4 +1,5 @@
 import type { FileName } from './file-names.ts';
+import { detailWords } from './part-kinds.ts';
 
 /** How likely clipping belongs to the sound of a part. */
 export type ClippingClass = 'never-wanted' | 'often-wanted' | 'unknown';
@@ -24,11 +25,11 @@ const distorted: ReadonlySet<string> = new Set(['Amp', 'Crunch', 'Distorted', 'F
  * Voices, acoustic instruments, keys and clean signals are never better for it; drums, amps,
  * synthesisers, effects and whatever is called distorted often are (common practice, no source).
  */
-export function clippingClass({ nature, instrument, detail }: FileName): ClippingClass {
-  if (detail.some((word) => distorted.has(word))) return 'often-wanted';
-  if (detail.includes('DI')) return 'never-wanted';
-  if (instrument !== null && acoustic.has(instrument)) return 'never-wanted';
-  switch (nature) {
+export function clippingClass(name: FileName): ClippingClass {
+  const details = detailWords(name);
+  if (details.some((word) => distorted.has(word))) return 'often-wanted';
+  if (details.includes('DI') || isAcoustic(name)) return 'never-wanted';
+  switch (name.nature) {
     case 'vocals':
     case 'orchestra':
     case 'keys':

@@ -1,5 +1,6 @@
 import type { ArgumentsOf } from '../findings/catalogue/definitions.ts';
 import { found, type CheckedTrack, type TrackCheck } from './check.ts';
+import { detailWords } from './part-kinds.ts';
 
 type CompanionCode = 'di-missing' | 'dry-missing' | 'untuned-missing';
 export type Companion = {
@@ -31,7 +32,7 @@ export function companionMissing(
       name.instrument === instrument &&
       (name.ordinal === null || ordinal === null || name.ordinal === ordinal),
   );
-  if (alike.some(({ name }) => name.detail.includes(word))) return null;
+  if (alike.some(({ name }) => detailWords(name).includes(word))) return null;
   const first = alike.find(({ name }) => name.ordinal === ordinal);
   if (first !== track) return null;
   const part = ordinal === null ? instrument : `${instrument} ${ordinal}`;

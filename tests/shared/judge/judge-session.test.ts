@@ -1,54 +1,95 @@
 import { describe, expect, it } from 'vitest';
+import { judgedSessionSchema } from '#shared/judge/judged-session.ts';
 import { judgeSession } from '#shared/judge/judge-session.ts';
-import { defaultRules } from '#shared/rules/starter-sets.ts';
+import { findingCodes } from '#shared/findings/finding.ts';
+import { defaultRules, starterSets } from '#shared/rules/starter-sets.ts';
 import { emptySessionInformation } from '#shared/session/session-information.ts';
+import { goodNames, goodTracks } from '../../support/finding-cases/finding-case.ts';
+import { clippedChannel } from '../../support/finding-cases/signal.ts';
 import { measuredFile, session } from '../../support/measure-builders.ts';
 
 const information = emptySessionInformation();
-const names = ['Kick.wav', 'Snare.wav', 'Bass.wav', 'Piano.wav', 'Lead Vocal.wav'];
+
+/** Files with something found in most of them. */
+function sixtyFiles() {
+  const parts = ['Kick In', 'Snare Top', 'Bass DI', 'Gtr', 'Piano', 'BV', 'Lead Vox', 'Strings'];
+  return Array.from({ length: 60 }, (_, index) =>
+    measuredFile({
+      path: `Song/${String(index).padStart(2, '0')}_${parts[index % parts.length]}_${index}.wav`,
+      format: { channels: (index % 2) + 1, frames: index % 7 === 0 ? 8_000_000 : 8_640_000 },
+      channel: { ...(index % 3 === 0 ? clippedChannel(200) : {}), soundingDcOffset: 0.001 },
+    }),
+  );
+}
 
 describe('judgeSession', () => {
-  it('finds nothing in files that agree', () => {
-    const good = session(names.map((path) => measuredFile({ path })));
-    const judgement = judgeSession(good, defaultRules, information);
-    expect(judgement.files.flatMap((file) => file.findings)).toEqual([]);
+  it('finds nothing in files that agree, and says what they agree on', () => {
+    const judgement = judgeSession(session(goodTracks()), defaultRules, information);
+    expect(judgement.files.map(({ path, findings }) => [path, findings])).toEqual(
+      goodNames.map((path) => [path, []]),
+    );
     expect(judgement.session).toMatchObject({
       sampleRateHz: 48_000,
       bits: 24,
       frames: 8_640_000,
       startsProven: true,
     });
+    expect(judgement.files.map(({ group }) => group)).toEqual([
+      'drums',
+      'bass',
+      'guitars',
+      'keys',
+      'vocals',
+    ]);
   });
 
-  it('reports a file that is shorter at its silent end, and offers silence', () => {
-    const short = measuredFile({
-      path: 'Tambourine.wav',
-      format: { frames: 4_800_000 },
-      channel: { lastSoundFrame: 4_700_000 },
+  it('takes plain data: what has been stored is judged alike', () => {
+    const measured = session(sixtyFiles());
+    const stored: unknown = JSON.parse(JSON.stringify(measured));
+    const again = judgedSessionSchema.parse(stored);
+    expect(judgeSession(again, defaultRules, information)).toEqual(
+      judgeSession(measured, defaultRules, information),
+    );
+  });
+
+  it('gives plain data, in the order of the codes', () => {
+    const judgement = judgeSession(session(sixtyFiles()), starterSets.numbered, information);
+    expect(JSON.parse(JSON.stringify(judgement))).toEqual(judgement);
+    for (const { findings } of [...judgement.files, judgement.session]) {
+      const order = findings.map(({ code }) => findingCodes.indexOf(code));
+      expect(order).toEqual([...order].sort((a, b) => a - b));
+    }
+  });
+
+  it('judges nothing at all, and files of which none is audio', () => {
+    expect(judgeSession(session([]), defaultRules, information).session).toMatchObject({
+      sampleRateHz: null,
+      frames: null,
+      startsProven: false,
     });
-    const files = [...names.map((path) => measuredFile({ path })), short];
-    const judgement = judgeSession(session(files), defaultRules, information);
-    expect(judgement.files.at(-1)?.findings).toEqual([
-      {
-        code: 'length-differs',
-        level: 'note',
-        files: ['Tambourine.wav'],
-        channel: null,
-        places: 0,
-        ranges: [],
-        args: {
-          lengthSeconds: 100,
-          sessionLengthSeconds: 180,
-          differenceFrames: -3_840_000,
-          differenceSeconds: -80,
-          startProven: true,
-          shiftSeconds: null,
-          soundsAtOnce: false,
-        },
-        rule: 'startAndLength.lengthToleranceFrames',
-        repairs: ['add-silence'],
-        answer: null,
-      },
-    ]);
+    const lyrics = {
+      path: 'Lyrics.txt',
+      bytes: 3,
+      reading: { kind: 'not-audio' as const },
+      format: null,
+      measures: null,
+    };
+    expect(judgeSession(session([lyrics]), defaultRules, information).verdict).toBe('ready');
+  });
+
+  it('judges sixty measured files again in a moment', () => {
+    const measured = session(sixtyFiles());
+    judgeSession(measured, starterSets.numbered, information);
+    const times = Array.from({ length: 9 }, (_, index) => {
+      // A changed rule is a new object, as it comes from a form or from a database.
+      const rules = structuredClone(starterSets.numbered);
+      rules.signal.ceilingDbfs = -1 - index;
+      const start = process.cpuUsage();
+      judgeSession(measured, rules, information);
+      const { user, system } = process.cpuUsage(start);
+      return (user + system) / 1000;
+    });
+    const [, , , , median = Infinity] = times.sort((a, b) => a - b);
+    expect(median).toBeLessThan(50);
   });
 });
