@@ -209,7 +209,7 @@ export const details: readonly DetailEntry[] = [
     written: 'Double',
     short: 'Dbl',
     forms:
-      'double, dbl, dub, dubl, dble, doubl, doubled, doubles, doubling, dbled, dbls, dubs, double track, double tracked, dt, dopplung, doppelung, doppel, gedoppelt, doppelt, doublage, doublure, doblaje, doble, doblada, doppia, doppio, raddoppio, dobro voz',
+      'double, dbl, dub, dubl, dble, doubl, doubled, doubles, doubling, dbled, dbls, dubs, double track, double tracked, dt, dopplung, doppelung, doppel, gedoppelt, doppelt, doublage, doublure, doblaje, doble, doblada, doppia, doppio, raddoppio',
   },
   { written: 'Triple', short: 'Trpl', forms: 'triple, trpl, tripled, trip, tripl' },
   { written: 'Quad', short: 'Quad', forms: 'quad, quads, quadruple' },
