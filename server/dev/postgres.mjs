@@ -1,13 +1,13 @@
-import { randomBytes } from 'node:crypto';
 import { closeSync, openSync } from 'node:fs';
-import { chown, mkdir, readFile, readlink, rename, rm, stat, writeFile } from 'node:fs/promises';
+import { readFile, readlink, rm, stat } from 'node:fs/promises';
 import { join } from 'node:path';
 import { setTimeout as delay } from 'node:timers/promises';
 import { exists } from './debian.mjs';
+import { cleanEnvironment, makeCluster } from './make-cluster.mjs';
 import { freePort, loopback } from './ports.mjs';
 import { findPostgresPrograms } from './postgres-programs.mjs';
-import { isRunning, runProgram, startProgram } from './processes.mjs';
-import { errorCode, lastLines, saysDiskFull, setupFailure } from './setup-failure.mjs';
+import { isRunning, startProgram } from './processes.mjs';
+import { lastLines, saysDiskFull, setupFailure } from './setup-failure.mjs';
 
 /**
  * A PostgreSQL cluster of our own: made, started on loopback, and gone with this process. Its
@@ -24,8 +24,6 @@ import { errorCode, lastLines, saysDiskFull, setupFailure } from './setup-failur
  * @property {import('./processes.mjs').RunningProgram} program the server; another after a restart
  */
 
-/** Room that a new cluster takes with its first write-ahead log, as told when there is none. */
-const clusterMegabytes = 60;
 /** Recovery after a crash can take a while; a server that is silent for longer is stuck. */
 const startSeconds = 120;
 
@@ -43,9 +41,6 @@ const throwawaySettings = {
   full_page_writes: 'off',
   max_connections: '200',
 };
-
-/** No setting of the caller's shell reaches the server. */
-const cleanEnvironment = { PATH: process.env.PATH, LANG: 'C.UTF-8' };
 
 /**
  * Makes the cluster where there is none, starts it and waits until it answers.
@@ -104,50 +99,6 @@ async function choosePrograms(home) {
       `installed any more. Please install postgresql-${madeBy.trim()}, or remove that folder to ` +
       'begin anew.',
   );
-}
-
-/**
- * @param {ClusterHome} home
- * @param {PostgresPrograms} programs
- * @param {boolean} durable
- */
-async function makeCluster(home, programs, durable) {
-  const { path, owner } = home;
-  const unfinished = join(path, 'data.unfinished');
-  const passwordFile = join(path, 'password');
-  try {
-    await mkdir(path, { recursive: true, mode: 0o700 });
-    await rm(unfinished, { recursive: true, force: true });
-    await writeFile(passwordFile, `${randomBytes(18).toString('hex')}\n`, { mode: 0o600 });
-    if (owner) {
-      for (const mine of [path, passwordFile]) await chown(mine, owner.uid, owner.gid);
-    }
-    const command = [
-      join(programs.bin, 'initdb'),
-      ...['-D', unfinished, '--username=postgres', `--pwfile=${passwordFile}`],
-      ...['--auth=scram-sha-256', '--encoding=UTF8', '--locale=C.UTF-8'],
-      ...(durable ? [] : ['--no-sync']),
-    ];
-    const { code, stdout, stderr } = await runProgram(command, {
-      owner,
-      cwd: '/',
-      env: cleanEnvironment,
-    });
-    if (code !== 0) throw new Error(lastLines(`${stdout}\n${stderr}`, 8));
-    // In place only when whole: a set-up that was cut off begins anew.
-    await rename(unfinished, join(path, 'data'));
-  } catch (error) {
-    await rm(unfinished, { recursive: true, force: true });
-    if (saysDiskFull(error)) {
-      throw setupFailure(
-        `There is no room on the disk for the database in ${path}: a new one takes about ` +
-          `${clusterMegabytes} MB.`,
-        error,
-      );
-    }
-    const reason = error instanceof Error ? error.message : String(error);
-    throw setupFailure(`The database in ${path} could not be made.\n${reason}`, error);
-  }
 }
 
 /**
@@ -290,9 +241,5 @@ export function keepClusterRunning(cluster, say, giveUp) {
 
 /** Removes a cluster that is not running. @param {ClusterHome} home */
 export async function removeCluster(home) {
-  try {
-    await rm(home.path, { recursive: true, force: true });
-  } catch (error) {
-    if (errorCode(error) !== 'ENOENT') throw error;
-  }
+  await rm(home.path, { recursive: true, force: true });
 }

@@ -1,14 +1,10 @@
 import { performance } from 'node:perf_hooks';
 import { parseArgs } from 'node:util';
-import { inCheckout } from './checkout.mjs';
-import { ensureDebianPackages } from './debian.mjs';
-import { installPackages } from './packages.mjs';
-import { postgresNeed } from './postgres-programs.mjs';
-import { runProgram, stopAllPrograms, whenNpmDies } from './processes.mjs';
+import { prepareTests } from './prepare-tests.mjs';
+import { stopAllPrograms, whenNpmDies } from './processes.mjs';
 import { createProgress } from './progress.mjs';
 import { describeFailure, setupFailure } from './setup-failure.mjs';
 import { testSteps } from './test-steps.mjs';
-import { testTools } from './test-tools.mjs';
 
 /**
  * `npm test`: installs what the tests need, then runs every step, going on after a failure, and
@@ -31,28 +27,15 @@ function chooseSteps(only) {
   });
 }
 
-/** @param {TestStep[]} steps */
-async function prepare(steps) {
-  await progress.step('Packages', installPackages);
-  if (steps.some((step) => step.needsTools)) {
-    await progress.step('Programs', (note) =>
-      ensureDebianPackages([postgresNeed, ...testTools], note),
-    );
-  }
-  const builds = [...new Set(steps.flatMap((step) => step.builds))];
-  if (builds.length > 0) {
-    const command = [process.execPath, inCheckout('server/dev/build.mjs'), ...builds];
-    const { code } = await runProgram(command, { cwd: inCheckout(), shown: true });
-    // The steps say themselves what does not work without it.
-    if (code !== 0) progress.say('A build failed; the tests go on without it.');
-    return code === 0;
-  }
-  return true;
-}
-
 /** @param {TestStep[]} steps @param {string[]} args */
 async function runSteps(steps, args) {
-  const built = await prepare(steps);
+  const built = await prepareTests({
+    builds: [...new Set(steps.flatMap((step) => step.builds))],
+    needsTools: steps.some((step) => step.needsTools),
+    progress,
+  });
+  // The steps say themselves what does not work without it.
+  if (!built) progress.say('A build failed; the tests go on without it.');
   const total = { passed: 0, failed: built ? 0 : 1, skipped: 0 };
   const lines = [];
   for (const step of steps) {
