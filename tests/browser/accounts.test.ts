@@ -1,6 +1,11 @@
 import { expect, test } from '@playwright/test';
 import { randomUUID } from 'node:crypto';
-import { linkFromMail, signInThroughPage, theProduct } from '../support/visit.ts';
+import {
+  accessibilityProblems,
+  linkFromMail,
+  signInThroughPage,
+  theProduct,
+} from '../support/visit.ts';
 
 /** The life of an account, through the pages and the real mails. */
 
@@ -147,6 +152,10 @@ test('an engineer founds a studio, invites an assistant, who joins with a new ac
     const theirs = await context.newPage();
     await theirs.goto(await linkFromMail(request, assistant, /invit/i));
     await expect(theirs.getByText(/invites you to be an assistant at Café Nord/)).toBeVisible();
+    for (const colorScheme of ['light', 'dark'] as const) {
+      await theirs.emulateMedia({ colorScheme, reducedMotion: 'reduce' });
+      expect(await accessibilityProblems(theirs)).toEqual([]);
+    }
     await theirs.getByLabel('Your name').fill('Lou Brandt');
     await theirs.getByLabel('Password', { exact: true }).fill(firstPassword);
     await theirs.getByRole('button', { name: 'Accept the invitation' }).click();
