@@ -33,15 +33,20 @@ export async function insertUser(
   return row.id;
 }
 
+/** A link that somebody asks for who is not signed in. */
+export type TokenByEmail =
+  | { kind: 'confirm-account'; email: string; name: string }
+  | { kind: 'reset-password'; email: string };
+
 /**
  * Makes a link for a new account if the address has none, or for an existing one if it has; the
  * same one statement either way, so that its duration tells nothing. Null when none was made.
  */
 export async function insertTokenByEmail(
   transaction: Transaction,
-  token:
-    | { kind: 'confirm-account'; email: string; name: string; createdAt: Date; expiresAt: Date }
-    | { kind: 'reset-password'; email: string; createdAt: Date; expiresAt: Date },
+  token: TokenByEmail,
+  createdAt: Date,
+  expiresAt: Date,
 ): Promise<{ id: string; secret: string } | null> {
   const { secret, secretHash } = newSecret();
   const id = uuidV7();
@@ -55,7 +60,7 @@ export async function insertTokenByEmail(
     insert into ${accountTokens}
       (id, kind, token_hash, user_id, email, name, created_at, expires_at)
     select ${id}::uuid, ${token.kind}, ${secretHash}, owner.id, ${token.email}, ${name}::text,
-      ${token.createdAt.toISOString()}::timestamptz, ${token.expiresAt.toISOString()}::timestamptz
+      ${createdAt.toISOString()}::timestamptz, ${expiresAt.toISOString()}::timestamptz
     from (${owner}) as owner
     returning id`);
   return made.length > 0 ? { id, secret } : null;

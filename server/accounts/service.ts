@@ -18,25 +18,7 @@ export async function register(
   { name, email }: { name: string; email: string },
   networkAddress: string,
 ): Promise<void> {
-  const { db, mail, clock } = services;
-  await countMailRequest(services, email, networkAddress);
-  await db.transaction(async (transaction) => {
-    const token = await queries.insertTokenByEmail(transaction, {
-      kind: 'confirm-account',
-      email,
-      name,
-      createdAt: clock.now(),
-      expiresAt: fromNow(clock, confirmationGoodForMs),
-    });
-    await mail.queue(transaction, {
-      cause: `register:${token?.id ?? uuidV7()}`,
-      recipient: email,
-      message: token
-        ? { kind: 'confirm-account', secret: token.secret }
-        : { kind: 'account-exists' },
-      goodForMs: confirmationGoodForMs,
-    });
-  });
+  await mailLink(services, { kind: 'confirm-account', email, name }, networkAddress);
 }
 
 /** Makes the account behind a confirmation link; returns its key. */
@@ -99,22 +81,7 @@ export async function requestPasswordReset(
   { email }: { email: string },
   networkAddress: string,
 ): Promise<void> {
-  const { db, mail, clock } = services;
-  await countMailRequest(services, email, networkAddress);
-  await db.transaction(async (transaction) => {
-    const token = await queries.insertTokenByEmail(transaction, {
-      kind: 'reset-password',
-      email,
-      createdAt: clock.now(),
-      expiresAt: fromNow(clock, resetGoodForMs),
-    });
-    await mail.queue(transaction, {
-      cause: `reset-password:${token?.id ?? uuidV7()}`,
-      recipient: email,
-      message: token ? { kind: 'reset-password', secret: token.secret } : { kind: 'no-account' },
-      goodForMs: resetGoodForMs,
-    });
-  });
+  await mailLink(services, { kind: 'reset-password', email }, networkAddress);
 }
 
 /** Sets the password behind a reset link and ends all sessions; returns the account's key. */
@@ -224,6 +191,37 @@ async function replacePassword(
     cause: `password-changed:${uuidV7()}`,
     recipient: email,
     message: { kind: 'password-changed' },
+  });
+}
+
+/** What the mail says when there is no link to send. */
+const withoutLink = {
+  'confirm-account': 'account-exists',
+  'reset-password': 'no-account',
+} as const;
+
+/**
+ * Queues a mail to the address whatever is known about it, by the same statements, so that
+ * neither the answer nor its duration tells whether it has an account.
+ */
+async function mailLink(
+  services: Services,
+  wanted: queries.TokenByEmail,
+  networkAddress: string,
+): Promise<void> {
+  const { db, mail, clock } = services;
+  const { kind, email } = wanted;
+  const goodForMs = kind === 'confirm-account' ? confirmationGoodForMs : resetGoodForMs;
+  await countMailRequest(services, email, networkAddress);
+  await db.transaction(async (transaction) => {
+    const expiresAt = fromNow(clock, goodForMs);
+    const token = await queries.insertTokenByEmail(transaction, wanted, clock.now(), expiresAt);
+    await mail.queue(transaction, {
+      cause: `${kind}:${token?.id ?? uuidV7()}`,
+      recipient: email,
+      message: token ? { kind, secret: token.secret } : { kind: withoutLink[kind] },
+      goodForMs,
+    });
   });
 }
 

@@ -1,3 +1,5 @@
+import { gt, lt, type SQL } from 'drizzle-orm';
+import type { PgColumn } from 'drizzle-orm/pg-core';
 import { z } from 'zod';
 import type { PageQuery } from '#shared/api/page.ts';
 import { AppError } from '#shared/errors.ts';
@@ -21,6 +23,16 @@ export function keyPage(query: PageQuery): KeyPage {
     });
   }
   return { after: query.cursor ?? null, fetch: query.limit + 1 };
+}
+
+/** The rows behind the page before, in a list that begins with the newest. */
+export function olderThan(page: KeyPage, key: PgColumn): SQL | undefined {
+  return page.after === null ? undefined : lt(key, page.after);
+}
+
+/** The rows behind the page before, in a list that begins with the oldest. */
+export function newerThan(page: KeyPage, key: PgColumn): SQL | undefined {
+  return page.after === null ? undefined : gt(key, page.after);
 }
 
 /** Makes the answer of a list from the fetched rows; `id` of a row is its key. */

@@ -1,4 +1,4 @@
-import { and, desc, eq, gt, lt, sql } from 'drizzle-orm';
+import { and, desc, eq, gt, sql } from 'drizzle-orm';
 import { v7 as uuidV7 } from 'uuid';
 import type { InvitedRole } from '#shared/api/invitations.ts';
 import type { Queryable, Transaction } from '../db/client.ts';
@@ -10,7 +10,7 @@ import {
   studios,
   users,
 } from '../db/schema.ts';
-import type { KeyPage } from '../http/page-by-key.ts';
+import { olderThan, type KeyPage } from '../http/page-by-key.ts';
 import { sha256Hex } from '../secret.ts';
 
 /** Where somebody is invited to: exactly one of a studio and a project. */
@@ -51,13 +51,7 @@ export async function listInvitations(db: Queryable, to: InvitedTo, now: Date, p
   return db
     .select()
     .from(invitations)
-    .where(
-      and(
-        isFor(to),
-        gt(invitations.expiresAt, now),
-        page.after === null ? undefined : lt(invitations.id, page.after),
-      ),
-    )
+    .where(and(isFor(to), gt(invitations.expiresAt, now), olderThan(page, invitations.id)))
     .orderBy(desc(invitations.id))
     .limit(page.fetch);
 }

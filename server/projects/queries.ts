@@ -1,4 +1,4 @@
-import { and, asc, desc, eq, gt, inArray, sql } from 'drizzle-orm';
+import { and, asc, desc, eq, inArray, sql } from 'drizzle-orm';
 import type { Queryable, Transaction } from '../db/client.ts';
 import {
   houseRulesEditions,
@@ -9,7 +9,7 @@ import {
   studios,
   users,
 } from '../db/schema.ts';
-import type { KeyPage } from '../http/page-by-key.ts';
+import { newerThan, type KeyPage } from '../http/page-by-key.ts';
 
 const projectColumns = {
   id: projects.id,
@@ -108,12 +108,7 @@ export async function listMembers(db: Queryable, projectId: string, page: KeyPag
     })
     .from(projectMembers)
     .innerJoin(users, eq(users.id, projectMembers.userId))
-    .where(
-      and(
-        eq(projectMembers.projectId, projectId),
-        page.after === null ? undefined : gt(projectMembers.id, page.after),
-      ),
-    )
+    .where(and(eq(projectMembers.projectId, projectId), newerThan(page, projectMembers.id)))
     .orderBy(asc(projectMembers.id))
     .limit(page.fetch);
 }
@@ -162,12 +157,7 @@ export async function listSongs(db: Queryable, projectId: string, page: KeyPage)
   return db
     .select()
     .from(songs)
-    .where(
-      and(
-        eq(songs.projectId, projectId),
-        page.after === null ? undefined : gt(songs.id, page.after),
-      ),
-    )
+    .where(and(eq(songs.projectId, projectId), newerThan(page, songs.id)))
     .orderBy(asc(songs.id))
     .limit(page.fetch);
 }

@@ -1,4 +1,4 @@
-import { and, desc, eq, gt, isNotNull, lt, or } from 'drizzle-orm';
+import { and, desc, eq, gt, isNotNull, or } from 'drizzle-orm';
 import type { Queryable } from '../db/client.ts';
 import {
   houseRulesEditions,
@@ -12,7 +12,7 @@ import {
   studios,
   users,
 } from '../db/schema.ts';
-import type { KeyPage } from '../http/page-by-key.ts';
+import { olderThan, type KeyPage } from '../http/page-by-key.ts';
 import { sha256Hex } from '../secret.ts';
 
 /** What lists show: everything but the report itself. */
@@ -82,14 +82,10 @@ export async function findReport(db: Queryable, reportId: string) {
   return { ...summary, ...content };
 }
 
-function isAfter(page: KeyPage) {
-  return page.after === null ? undefined : lt(reports.id, page.after);
-}
-
 /** The reports of a song, newest first. */
 export async function listSongReports(db: Queryable, songId: string, page: KeyPage) {
   return selectSummaries(db)
-    .where(and(eq(reports.songId, songId), isAfter(page)))
+    .where(and(eq(reports.songId, songId), olderThan(page, reports.id)))
     .orderBy(desc(reports.id))
     .limit(page.fetch);
 }
@@ -114,7 +110,7 @@ export async function listReportsBy(db: Queryable, userId: string, page: KeyPage
       and(
         eq(reports.createdBy, userId),
         or(eq(projects.ownerId, userId), isNotNull(studioMembers.id), isNotNull(projectMembers.id)),
-        isAfter(page),
+        olderThan(page, reports.id),
       ),
     )
     .orderBy(desc(reports.id))
@@ -157,7 +153,7 @@ export async function listShares(db: Queryable, reportId: string, now: Date, pag
       and(
         eq(reportShares.reportId, reportId),
         gt(reportShares.expiresAt, now),
-        page.after === null ? undefined : lt(reportShares.id, page.after),
+        olderThan(page, reportShares.id),
       ),
     )
     .orderBy(desc(reportShares.id))

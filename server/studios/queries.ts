@@ -1,7 +1,7 @@
-import { and, asc, eq, gt } from 'drizzle-orm';
+import { and, asc, eq } from 'drizzle-orm';
 import type { Queryable, Transaction } from '../db/client.ts';
 import { studioMembers, studios, users } from '../db/schema.ts';
-import type { KeyPage } from '../http/page-by-key.ts';
+import { newerThan, type KeyPage } from '../http/page-by-key.ts';
 
 const studioColumns = {
   id: studios.id,
@@ -30,12 +30,7 @@ export async function listStudiosOf(db: Queryable, userId: string, page: KeyPage
     .select(studioColumns)
     .from(studioMembers)
     .innerJoin(studios, eq(studios.id, studioMembers.studioId))
-    .where(
-      and(
-        eq(studioMembers.userId, userId),
-        page.after === null ? undefined : gt(studios.id, page.after),
-      ),
-    )
+    .where(and(eq(studioMembers.userId, userId), newerThan(page, studios.id)))
     .orderBy(asc(studios.id))
     .limit(page.fetch);
 }
@@ -59,12 +54,7 @@ export async function listMembers(db: Queryable, studioId: string, page: KeyPage
     })
     .from(studioMembers)
     .innerJoin(users, eq(users.id, studioMembers.userId))
-    .where(
-      and(
-        eq(studioMembers.studioId, studioId),
-        page.after === null ? undefined : gt(studioMembers.id, page.after),
-      ),
-    )
+    .where(and(eq(studioMembers.studioId, studioId), newerThan(page, studioMembers.id)))
     .orderBy(asc(studioMembers.id))
     .limit(page.fetch);
 }
