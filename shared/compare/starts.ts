@@ -20,6 +20,9 @@ export type TrackForStart = { path: string; format: TrackFormat; measures: Measu
 /** Sounding this early is sounding at once: the width of one window of the sound meter. */
 const atOnceSeconds = 0.01;
 
+/** Exports of one session can differ by this much in length: their ends were rounded. */
+const roundingSeconds = 0.001;
+
 /** A track that sounds in its first 10 ms (louder than -60 dBFS). */
 export function soundsAtOnce({ format, measures }: TrackForStart): boolean {
   return measures.channels.some(
@@ -75,8 +78,8 @@ function entersLate({ format, measures }: TrackForStart): boolean {
 
 /**
  * Works out for every track whether its start is proven. A proof is: the time stamp most tracks
- * carry; the length at least half of the tracks have; or being shorter than that length only at a
- * silent end. `silentEndDbfs` is the peak of the last 50 ms that still counts as silent.
+ * carry; the length at least half of the tracks have; or differing from that length only at a
+ * silent end, by being shorter or by a millisecond of rounding. `silentEndDbfs` is the peak of the last 50 ms that still counts as silent.
  */
 export function startEvidence(
   tracks: readonly TrackForStart[],
@@ -120,7 +123,7 @@ export function startEvidence(
         evidence.shiftFrames === null &&
         !stampDifferenceFrames &&
         halfShareLength &&
-        frames < sessionFrames &&
+        frames - sessionFrames <= roundingSeconds * sessionRateHz &&
         !atOnce &&
         endsSilent(track.measures, rules.silentEndDbfs)
       )

@@ -2,7 +2,7 @@ import type { FileName } from './file-names.ts';
 import { detailWords } from './part-kinds.ts';
 
 /** How likely clipping belongs to the sound of a part. */
-export type ClippingClass = 'never-wanted' | 'often-wanted' | 'unknown';
+export type ClippingClass = 'never-wanted' | 'often-wanted' | 'came-so' | 'unknown';
 
 /** Strings that a microphone picks up without an amp, whatever group they are listed in. */
 const acoustic: ReadonlySet<string> = new Set([
@@ -23,10 +23,12 @@ const distorted: ReadonlySet<string> = new Set(['Amp', 'Crunch', 'Distorted', 'F
 
 /**
  * Voices, acoustic instruments, keys and clean signals are never better for it; drums, amps,
- * synthesisers, effects and whatever is called distorted often are (common practice, no source).
+ * synthesisers, effects and whatever is called distorted often are. Loops and samples came the way
+ * they are, so there is no recording to go back to (common practice, no source).
  */
 export function clippingClass(name: FileName): ClippingClass {
   const details = detailWords(name);
+  if (isSample(name)) return 'came-so';
   if (details.some((word) => distorted.has(word))) return 'often-wanted';
   if (details.includes('DI') || isAcoustic(name)) return 'never-wanted';
   switch (name.nature) {
@@ -44,6 +46,13 @@ export function clippingClass(name: FileName): ClippingClass {
     case null:
       return 'unknown';
   }
+}
+
+/** Cut from a record or a library: a loop, a sample, a chop, a break. */
+function isSample(name: FileName): boolean {
+  return [name.instrument, ...detailWords(name)].some(
+    (words) => words !== null && /\b(Loop|Sample|Chops?|Break)\b/.test(words),
+  );
 }
 
 export function isAcoustic({ instrument }: Pick<FileName, 'instrument'>): boolean {

@@ -116,15 +116,17 @@ function checkFile(
     found.push(...readingChecks.map((check) => check(measured)));
   }
   if (track) {
-    const checks = [
-      ...formatChecks,
-      ...(track.role === 'click' ? [] : signalChecks),
-      ...companionChecks,
-    ];
-    found.push(...checks.map((check) => check(track, session)));
+    found.push(...[...formatChecks, ...companionChecks].map((check) => check(track, session)));
+    const heard = track.role === 'click' ? [] : signalChecks.map((check) => check(track, session));
+    // A guide is replaced anyway: how it sounds is only worth a note.
+    found.push(...heard.map((one) => (one && track.role === 'guide' ? asNote(one) : one)));
   }
   if (belongsToSession(file)) found.push(...nameChecks.map((check) => check(file, session)));
   return found.filter((finding) => finding !== null);
+}
+
+function asNote(found: Found): Found {
+  return { ...found, level: 'note' };
 }
 
 function toFinding(

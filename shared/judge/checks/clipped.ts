@@ -68,8 +68,9 @@ function isFlatByDesign(
 ): boolean {
   if (clipping.flatCycleShare >= rules.flatTopsShare) return true;
   const seconds = measures.frames / format.sampleRateHz;
+  const kind = clippingClass(name);
   return (
-    clippingClass(name) === 'often-wanted' &&
+    (kind === 'often-wanted' || kind === 'came-so') &&
     clipping.flatCycleShare >= denseFlatShare &&
     clipping.fullScaleRuns === 0 &&
     clippedRuns >= denseRunsPerSecond * seconds
@@ -98,6 +99,8 @@ function levelOf(kind: ClippingClass, serious: boolean, atFullScale: boolean): L
       return 'must-fix';
     case 'often-wanted':
       return serious && atFullScale ? 'must-fix' : 'look';
+    case 'came-so':
+      return 'look';
     case 'unknown':
       return serious ? 'must-fix' : 'look';
   }

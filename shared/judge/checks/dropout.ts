@@ -1,13 +1,14 @@
 import { joinPlaces } from '../../findings/finding-places.ts';
 import type { FindingRange } from '../../findings/finding.ts';
 import { found, type CheckedSession, type CheckedTrack, type TrackCheck } from '../check.ts';
+import { isOnTheBeat } from '../beat-grid.ts';
 import { sameInstrument } from '../same-part.ts';
 import { onlyChannel } from '../track-measures.ts';
 
 /**
  * A short abrupt silence inside running sound. Many of them in one file are chops, stutters or a
  * gate, so a style. A few are a look; at the same moment in another part they are the recording
- * that stopped for an instant.
+ * that stopped for an instant, unless it stopped and went on with the beat.
  */
 export const dropout: TrackCheck = (track, session) => {
   const places = placesOf(track, session);
@@ -31,7 +32,10 @@ export const dropout: TrackCheck = (track, session) => {
       sharedPlaces: shared.size,
       sharedWith,
     },
-    { ...places, level: shared.size > 0 ? 'must-fix' : 'look' },
+    {
+      ...places,
+      level: [...shared].some((range) => !isOnTheBeat(range, track, session)) ? 'must-fix' : 'look',
+    },
   );
 };
 

@@ -1,6 +1,8 @@
 import { sameLength } from '../../compare/starts.ts';
 import { speedRatio } from '../../compare/speed.ts';
-import { found, type TrackCheck } from '../check.ts';
+import type { Level } from '../../findings/finding.ts';
+import { found, type CheckedTrack, type TrackCheck } from '../check.ts';
+import { isReturnOrEffect } from '../part-kinds.ts';
 
 /**
  * Not as long as the session. Where the start is proven only the end differs, which silence
@@ -28,8 +30,15 @@ export const lengthDiffers: TrackCheck = (track, session) => {
       soundsAtOnce: start.soundsAtOnce,
     },
     {
-      level: startProven ? 'note' : start.shiftFrames === null ? 'look' : 'must-fix',
+      level: levelOf(track, differenceFrames),
       repairs: startProven && differenceFrames < 0 ? ['add-silence'] : [],
     },
   );
 };
+
+/** A return that rings on after everything else is longer by its nature. */
+function levelOf({ start, name }: CheckedTrack, differenceFrames: number): Level {
+  if (start.proof !== null) return 'note';
+  if (start.shiftFrames !== null) return 'must-fix';
+  return differenceFrames > 0 && isReturnOrEffect(name) ? 'note' : 'look';
+}

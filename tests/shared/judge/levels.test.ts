@@ -1,7 +1,13 @@
 import { describe, expect, it } from 'vitest';
 import type { Level } from '#shared/findings/finding.ts';
 import type { HouseRules } from '#shared/rules/house-rules.ts';
-import { judgeCase, quietRules } from '../../support/finding-cases/finding-case.ts';
+import type { JudgedFile } from '#shared/judge/judged-session.ts';
+import {
+  findingsOf,
+  judgeCase,
+  quietRules,
+  type JudgedCase,
+} from '../../support/finding-cases/finding-case.ts';
 import { clippedChannel } from '../../support/finding-cases/signal.ts';
 import { measuredFile } from '../../support/measure-builders.ts';
 
@@ -79,6 +85,83 @@ describe('the level of clipping', () => {
     expect(
       levelOfClipping('Electric Guitar Fuzz', clippedChannel(9_000, { flatCycleShare: 0.29 })),
     ).toBe('look');
+  });
+});
+
+/** The findings of files that are added to good ones, without their arguments. */
+function found(add: JudgedFile[], information: JudgedCase['information'] = {}): string[] {
+  return findingsOf({ add, information }).map(
+    ({ level, code, files }) => `${level} ${code} ${files.join(' + ')}`,
+  );
+}
+
+describe('levels that keep good sessions quiet', () => {
+  it('let loops and samples be as loud as they came', () => {
+    const loud = clippedChannel(99, atFullScale);
+    expect(levelOfClipping('Drum Loop', loud)).toBe('look');
+    expect(levelOfClipping('Vocal Chops', loud)).toBe('look');
+  });
+
+  it('let a return ring on after everything else, and ends be rounded by a millisecond', () => {
+    const ringing = { tailPeakDbfs: -50, floorDbfs: -55 };
+    const longer = (path: string, frames: number) =>
+      measuredFile({ path, format: { frames: 8_640_000 + frames }, channel: ringing });
+    expect(found([longer('Vocal Reverb.wav', 96_000), longer('Organ.wav', 96_000)])).toEqual([
+      'note length-differs Vocal Reverb.wav',
+      'look length-differs Organ.wav',
+    ]);
+    const rounded = measuredFile({ path: 'Organ.wav', format: { frames: 8_640_048 } });
+    expect(found([rounded])).toEqual(['note length-differs Organ.wav']);
+  });
+
+  it('know the side of a mid/side pair', () => {
+    const pair = { midUnderSideDb: 90, sideUnderMidDb: -90, correlation: -1 };
+    const stereo = (path: string) => measuredFile({ path, format: { channels: 2 }, pair });
+    expect(found([stereo('Overheads S.wav'), stereo('Organ.wav')])).toEqual([
+      'note sides-cancel Overheads S.wav',
+      'must-fix sides-cancel Organ.wav',
+    ]);
+  });
+
+  it('let several tracks stop together with the beat', () => {
+    // At 120 BPM a thirty-second is 62.5 ms, 3,000 frames at 48 kHz.
+    const stop = (path: string, start: number, frames = 3_000) =>
+      measuredFile({
+        path,
+        channel: {
+          dropouts: { count: 1, ranges: [{ startFrame: start, endFrame: start + frames }] },
+        },
+      });
+    const tempo = { kind: 'fixed' as const, bpm: 120 };
+    const stops = [stop('Organ.wav', 480_000), stop('Violin.wav', 480_000)];
+    expect(found(stops, { tempo })).toEqual(['look dropout Organ.wav', 'look dropout Violin.wav']);
+    expect(found(stops)).toEqual(['must-fix dropout Organ.wav', 'must-fix dropout Violin.wav']);
+    // 97 frames are 2.02 ms beside it.
+    const beside = [stop('Organ.wav', 480_097), stop('Violin.wav', 480_097)];
+    expect(found(beside, { tempo })).toEqual([
+      'must-fix dropout Organ.wav',
+      'must-fix dropout Violin.wav',
+    ]);
+  });
+
+  it('count gaps of one instrument once, and only within 5 ms', () => {
+    const gap = (path: string, startFrame: number) =>
+      measuredFile({
+        path,
+        channel: { dropouts: { count: 1, ranges: [{ startFrame, endFrame: startFrame + 480 }] } },
+      });
+    expect(found([gap('Kick Out.wav', 99_999), gap('Kick Sub.wav', 99_999)])).toEqual([
+      'look dropout Kick Out.wav',
+      'look dropout Kick Sub.wav',
+    ]);
+    // 240 frames at 48 kHz are 5 ms.
+    expect(found([gap('Organ.wav', 99_999), gap('Violin.wav', 100_239)])[0]).toMatch(/^must-fix/);
+    expect(found([gap('Organ.wav', 99_999), gap('Violin.wav', 100_241)])[0]).toMatch(/^look/);
+  });
+
+  it('only note how a guide track sounds', () => {
+    const guide = measuredFile({ path: 'Guide Vocal.wav', channel: clippedChannel(99) });
+    expect(found([guide])).toEqual(['note clipped Guide Vocal.wav']);
   });
 });
 

@@ -43,7 +43,8 @@ export const startAndLengthCases = {
           format: { frames: shorter, timeReferenceFrames: 960_000 },
           channel: { tailPeakDbfs: -59.9, floorDbfs: -60, endEdge: { peakDbfs: -60, ramps: true } },
         }),
-        measuredFile({ path: 'Cello.wav', format: { frames: 8_640_001 } }),
+        // 48 frames are the millisecond that ends may be rounded by.
+        measuredFile({ path: 'Cello.wav', format: { frames: 8_640_049 } }),
       ],
       instead: goodTracks({ format: { timeReferenceFrames: 0 } }),
     },
@@ -74,9 +75,9 @@ export const startAndLengthCases = {
         files: ['Cello.wav'],
         args: {
           ...shorterBy20,
-          lengthSeconds: 8_640_001 / 48_000,
-          differenceFrames: 1,
-          differenceSeconds: 1 / 48_000,
+          lengthSeconds: 8_640_049 / 48_000,
+          differenceFrames: 49,
+          differenceSeconds: 49 / 48_000,
         },
         repairs: [],
       },
