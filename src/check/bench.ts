@@ -153,9 +153,12 @@ export class Bench {
     return worker.call('prepare', { files: this.files, check, repaired, report });
   };
 
-  readonly sessionWorker = (): Promise<SessionWorker> => {
-    this.worker ??= this.meters().then(openSessionWorker);
-    return this.worker;
+  readonly sessionWorker = async (): Promise<SessionWorker> => {
+    const before = this.worker;
+    if (before && (await before.then(({ isAlive }) => isAlive).catch(() => false))) return before;
+    // Somebody else may have seen the same worker gone and started the next one meanwhile.
+    if (this.worker === before) this.worker = this.meters().then(openSessionWorker);
+    return this.worker!;
   };
 
   close(): void {
@@ -163,7 +166,10 @@ export class Bench {
     this.repairing?.abort();
     clearTimeout(this.repairTimer);
     this.pool?.close();
-    void this.worker?.then((worker) => worker.close());
+    void this.worker?.then(
+      (worker) => worker.close(),
+      () => undefined,
+    );
     this.pool = null;
     this.worker = null;
   }
@@ -177,7 +183,11 @@ export class Bench {
   }
 
   private meters(): Promise<WebAssembly.Module> {
-    this.module ??= loadMeters();
+    // Without a network it fails and may work a moment later.
+    this.module ??= loadMeters().catch((cause: unknown) => {
+      this.module = null;
+      throw cause;
+    });
     return this.module;
   }
 
@@ -233,7 +243,7 @@ export class Bench {
     const kept = new Map(
       files.flatMap((file) => {
         const known = this.measured.get(stampOf(file));
-        return known ? [[stampOf(file), known] as const] : [];
+        return known && isTrusted(known) ? [[stampOf(file), known] as const] : [];
       }),
     );
     this.measured = kept;
@@ -342,6 +352,12 @@ export class Bench {
 /** The same path, length and time of change: the same file, as far as anybody can tell unread. */
 function stampOf({ path, size, file, zipPath }: FileToRead): string {
   return [path, size, file.lastModified, zipPath ?? ''].join('\n');
+}
+
+/** Whether reading the same file again would only give the same again. */
+function isTrusted({ reading, measures }: MeasuredFile): boolean {
+  const failed = reading.kind === 'unreadable' && reading.reason === 'could-not-be-read';
+  return !failed && measures?.changedWhileRead !== true;
 }
 
 /** Loose files replace those of the same name, wherever these lie in the folder; others join. */

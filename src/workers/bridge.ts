@@ -20,6 +20,8 @@ export type Handlers<Api extends WorkerApi> = {
 type Request = { id: number; method: string; input: unknown } | { id: number; cancel: true };
 
 type Answer =
+  /** Sent once, first: the name of a lock that the worker holds for as long as it lives. */
+  | { heldLock: string }
   | { id: number; progress: unknown }
   | { id: number; output: unknown }
   | { id: number; error: AppErrorData }
@@ -31,6 +33,7 @@ export function serveWorker<Api extends WorkerApi>(
   transferOf: (output: unknown) => Transferable[] = () => [],
 ): void {
   const running = new Map<number, AbortController>();
+  void holdLock();
   const post = (answer: Answer, transfer: Transferable[] = []): void => {
     (globalThis as unknown as DedicatedPort).postMessage(answer, transfer);
   };
@@ -57,6 +60,19 @@ export function serveWorker<Api extends WorkerApi>(
         running.delete(request.id);
       }
     })();
+  });
+}
+
+/**
+ * A worker that is ended by the browser (out of memory, most of all) says nothing any more: no
+ * error event comes. Its locks are released, though, and that the page can wait for.
+ */
+async function holdLock(): Promise<void> {
+  if (!('locks' in navigator)) return;
+  const heldLock = `worker-${crypto.randomUUID()}`;
+  await navigator.locks.request(heldLock, () => {
+    (globalThis as unknown as DedicatedPort).postMessage({ heldLock } satisfies Answer, []);
+    return new Promise<never>(() => undefined);
   });
 }
 
@@ -118,12 +134,22 @@ export class WorkerLink<Api extends WorkerApi> {
     });
   }
 
+  /** False once the worker went away or was closed: it answers no more calls. */
+  get isAlive(): boolean {
+    return this.crashed === null;
+  }
+
   /** Ends the worker; calls still running are told it is gone. */
   close(): void {
     this.fail('closed');
   }
 
   private settle(answer: Answer): void {
+    if ('heldLock' in answer) {
+      // Granted when the worker is gone; after an orderly close there is nothing left to tell.
+      void navigator.locks.request(answer.heldLock, () => this.fail('ended by the browser'));
+      return;
+    }
     const call = this.pending.get(answer.id);
     if (!call) return;
     if ('progress' in answer) {
@@ -143,6 +169,7 @@ export class WorkerLink<Api extends WorkerApi> {
   }
 
   private fail(reason: string): void {
+    if (this.crashed) return;
     this.worker.terminate();
     this.crashed = new WorkerCrash(reason);
     for (const [id, call] of [...this.pending]) {

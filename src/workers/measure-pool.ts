@@ -6,14 +6,19 @@ import type { MeasureApi, MeasureInput, MeasureOutput } from './measure-api.ts';
 export type MeasurePool = {
   /** Workers at most. */
   readonly size: number;
-  /** Measures one file in the next free worker. A file whose worker crashes is tried once more. */
+  /**
+   * Measures one file in the next free worker. A file whose worker crashes is tried once more; when
+   * that worker crashes too, the file is `unreadable` and the others go on. Throws AppError
+   * `engine-failed` when workers do not even start.
+   */
   measure(input: MeasureInput, options?: CallOptions<number>): Promise<MeasureOutput>;
   close(): void;
 };
 
 /**
  * As many workers as the machine has cores, each taking whole files from one queue. Workers start
- * when the first file comes and all share one compiled module.
+ * when the first file comes. All share one compiled module: `loadModule` is asked once a worker and
+ * gives every time the same.
  */
 export function createMeasurePool(
   loadModule: () => Promise<WebAssembly.Module>,
@@ -22,21 +27,27 @@ export function createMeasurePool(
   const idle: WorkerLink<MeasureApi>[] = [];
   const waiting: ((link: Promise<WorkerLink<MeasureApi>>) => void)[] = [];
   let started = 0;
-  let module: Promise<WebAssembly.Module> | null = null;
   let closed = false;
 
   const start = async (): Promise<WorkerLink<MeasureApi>> => {
-    module ??= loadModule();
+    const module = await loadModule();
     const link = new WorkerLink<MeasureApi>(
       new Worker(new URL('./measure.worker.ts', import.meta.url), { type: 'module' }),
     );
-    await link.call('load', await module);
+    try {
+      await link.call('load', module);
+    } catch (cause) {
+      link.close();
+      throw cause instanceof WorkerCrash ? new StartFailure(cause.message) : cause;
+    }
     return link;
   };
 
   const take = (): Promise<WorkerLink<MeasureApi>> => {
-    const link = idle.pop();
-    if (link) return Promise.resolve(link);
+    for (let link = idle.pop(); link; link = idle.pop()) {
+      if (link.isAlive) return Promise.resolve(link);
+      started -= 1;
+    }
     if (started < size) {
       started += 1;
       return start();
@@ -61,7 +72,7 @@ export function createMeasurePool(
       if (closed) throw new AppError('cancelled');
       return await link.call('measure', input, options);
     } catch (cause) {
-      if (cause instanceof WorkerCrash) link = null;
+      if (link && !link.isAlive) link = null;
       throw cause;
     } finally {
       if (closed) link?.close();
@@ -72,16 +83,40 @@ export function createMeasurePool(
   return {
     size,
     async measure(input, options = {}) {
-      try {
-        return await measureOnce(input, options);
-      } catch (cause) {
-        if (cause instanceof WorkerCrash && !closed) return measureOnce(input, options);
-        throw cause;
+      for (let attempt = 1; ; attempt++) {
+        try {
+          return await measureOnce(input, options);
+        } catch (cause) {
+          const ended = cause instanceof WorkerCrash || cause instanceof StartFailure;
+          if (!ended || closed) throw cause;
+          if (attempt < mostAttempts) continue;
+          if (cause instanceof StartFailure) {
+            throw new AppError('engine-failed', { reason: cause.message });
+          }
+          return couldNotBeRead(input);
+        }
       }
     },
     close() {
       closed = true;
       for (const link of idle) link.close();
     },
+  };
+}
+
+const mostAttempts = 2;
+
+/** A worker ended before it could do anything: its script did not load. Not the file's doing. */
+class StartFailure extends Error {
+  override name = 'StartFailure';
+}
+
+function couldNotBeRead({ path, size }: MeasureInput): MeasureOutput {
+  return {
+    path,
+    bytes: size,
+    reading: { kind: 'unreadable', reason: 'could-not-be-read', byteOffset: 0 },
+    measures: null,
+    overview: null,
   };
 }
