@@ -54,7 +54,7 @@ export function SaveBar({ bench, report, children }: SaveBarProps) {
   };
 
   return (
-    <footer className="sticky bottom-0 z-10 border-t border-line bg-paper px-4 py-3 sm:px-7">
+    <footer className="z-10 border-t sm:sticky sm:bottom-0 border-line bg-paper px-4 py-3 sm:px-7">
       {failure !== null && <ErrorPanel error={failure} />}
       {saving && <SavingProgress {...saving} />}
       {saved && (

@@ -12,7 +12,7 @@ export function SongFields({ information, onChange }: SongFieldsProps) {
   const { artist, title, tempo } = information;
   return (
     <div className="grid gap-4 text-start sm:grid-cols-[1fr_1fr_8rem]">
-      <Field label="Artist" optional>
+      <Field label="Artist">
         {(control) => (
           <TextInput
             {...control}
@@ -22,7 +22,7 @@ export function SongFields({ information, onChange }: SongFieldsProps) {
           />
         )}
       </Field>
-      <Field label="Song" optional>
+      <Field label="Song">
         {(control) => (
           <TextInput
             {...control}
@@ -32,7 +32,7 @@ export function SongFields({ information, onChange }: SongFieldsProps) {
           />
         )}
       </Field>
-      <Field label="Tempo, BPM" optional>
+      <Field label="Tempo, BPM">
         {(control) => (
           <TextInput
             {...control}

@@ -10,21 +10,25 @@ import { chromiumPath } from '../../server/dev/test-tools.mjs';
  *   node tests/support/screenshots.mjs --origin http://127.0.0.1:5180 --to pictures \
  *     --sign-in 'maren@harbour-lane.example:her password'
  *
- * Without --sign-in only the pages for everybody are taken. File names say page, theme, width.
+ * --only bench,front takes some of them. Without --sign-in only the pages for everybody are taken. File names say page, theme, width.
  */
 
 const { values } = parseArgs({
   options: {
     origin: { type: 'string' },
     to: { type: 'string' },
+    only: { type: 'string' },
     'sign-in': { type: 'string' },
   },
 });
 if (!values.origin || !values.to) {
-  console.error('Usage: screenshots.mjs --origin URL --to FOLDER [--sign-in EMAIL:PASSWORD]');
+  console.error(
+    'Usage: screenshots.mjs --origin URL --to FOLDER [--only NAMES] [--sign-in EMAIL:PASSWORD]',
+  );
   process.exit(2);
 }
 const { origin, to } = values;
+const only = values.only ? new Set(values.only.split(',')) : undefined;
 
 /**
  * @typedef {object} Picture
@@ -43,6 +47,15 @@ const openPictures = [
     prepare: (page) => page.getByText('As packed', { exact: true }).click(),
   },
   { name: 'check', at: '/check' },
+  {
+    name: 'bench',
+    at: '/check?rules=harbour-lane-mixing/1',
+    prepare: async (page) => {
+      await page.getByRole('button', { name: 'Try it with a sample' }).click();
+      await page.getByRole('button', { name: 'Save the zip' }).waitFor({ timeout: 60_000 });
+      await page.waitForTimeout(500);
+    },
+  },
   { name: 'rules', at: '/rules/harbour-lane-mixing', whole: true },
   { name: 'design', at: '/design', whole: true },
 ];
@@ -99,6 +112,7 @@ for (const { theme, width, height } of looks) {
   const page = await context.newPage();
   const pictures = values['sign-in'] ? [...openPictures, ...signedInPictures] : openPictures;
   for (const { name, at, whole = false, prepare } of pictures) {
+    if (only && !only.has(name)) continue;
     await page.goto(origin + at);
     await page.getByRole('heading', { level: 1 }).waitFor();
     await page.waitForLoadState('networkidle');
