@@ -48,11 +48,11 @@ export function clippingClass(name: FileName): ClippingClass {
   }
 }
 
-/** Cut from a record or a library: a loop, a sample, a chop, a break. */
+/** Cut from a record or a library: a loop, a sample, a chop; of drums a break as well. */
 function isSample(name: FileName): boolean {
-  return [name.instrument, ...detailWords(name)].some(
-    (words) => words !== null && /\b(Loop|Sample|Chops?|Break)\b/.test(words),
-  );
+  const words = [name.instrument ?? '', ...detailWords(name)].join(' ');
+  const isBeat = name.nature === null || name.nature === 'drums' || name.nature === 'percussion';
+  return /\b(Loop|Sample|Chops?)\b/.test(words) || (isBeat && /\bBreak\b/.test(words));
 }
 
 export function isAcoustic({ instrument }: Pick<FileName, 'instrument'>): boolean {

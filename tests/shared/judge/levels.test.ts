@@ -159,6 +159,24 @@ describe('levels that keep good sessions quiet', () => {
     expect(found([gap('Organ.wav', 99_999), gap('Violin.wav', 100_241)])[0]).toMatch(/^look/);
   });
 
+  it('take five gaps for gaps, and six for a style', () => {
+    const gaps = (count: number) =>
+      measuredFile({
+        path: 'Organ.wav',
+        channel: {
+          dropouts: {
+            count,
+            ranges: Array.from({ length: count }, (_, index) => ({
+              startFrame: index * 100_000,
+              endFrame: index * 100_000 + 480,
+            })),
+          },
+        },
+      });
+    expect(found([gaps(5)])).toEqual(['look dropout Organ.wav']);
+    expect(found([gaps(6)])).toEqual([]);
+  });
+
   it('only note how a guide track sounds', () => {
     const guide = measuredFile({ path: 'Guide Vocal.wav', channel: clippedChannel(99) });
     expect(found([guide])).toEqual(['note clipped Guide Vocal.wav']);
