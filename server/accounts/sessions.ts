@@ -1,4 +1,4 @@
-import { eq, lt, sql } from 'drizzle-orm';
+import { eq, lt } from 'drizzle-orm';
 import { Lucia, TimeSpan, type Adapter } from 'lucia';
 import { msPerDay, type Clock } from '../clock.ts';
 import type { Database, Queryable } from '../db/client.ts';
@@ -84,7 +84,7 @@ export function createSessions(db: Database, clock: Clock): Sessions {
 /**
  * Stores the SHA-256 of each id and gives lucia the plain id back, which it puts into renewed
  * cookies. lucia reads the system's clock; the adapter moves its dates by the difference to
- * ours. The absolute lifetime is ours alone: it is checked on reading and caps each renewal.
+ * ours. The absolute lifetime is ours alone: lucia does not hear of a session beyond it.
  */
 function createAdapter(db: Database, clock: Clock): Adapter {
   const offsetMs = () => clock.now().getTime() - Date.now();
@@ -105,10 +105,13 @@ function createAdapter(db: Database, clock: Clock): Adapter {
         .innerJoin(users, eq(users.id, sessionTable.userId))
         .where(eq(sessionTable.idHash, sha256Hex(sessionId)));
       if (!row) return [null, null];
+      if (row.createdAt.getTime() + absoluteLifetimeMs <= clock.now().getTime()) {
+        await this.deleteSession(sessionId);
+        return [null, null];
+      }
       const { userId, name, email } = row;
-      const end = Math.min(row.expiresAt.getTime(), row.createdAt.getTime() + absoluteLifetimeMs);
       return [
-        { id: sessionId, userId, expiresAt: toLucia(new Date(end)), attributes: {} },
+        { id: sessionId, userId, expiresAt: toLucia(row.expiresAt), attributes: {} },
         { id: userId, attributes: { name, email } },
       ];
     },
@@ -125,13 +128,9 @@ function createAdapter(db: Database, clock: Clock): Adapter {
       });
     },
     async updateSessionExpiration(sessionId, expiresAt) {
-      const wanted = fromLucia(expiresAt).toISOString();
       await db
         .update(sessionTable)
-        .set({
-          expiresAt: sql`least(${wanted}::timestamptz,
-            ${sessionTable.createdAt} + ${absoluteLifetimeMs} * interval '1 millisecond')`,
-        })
+        .set({ expiresAt: fromLucia(expiresAt) })
         .where(eq(sessionTable.idHash, sha256Hex(sessionId)));
     },
     async deleteSession(sessionId) {
