@@ -50,7 +50,8 @@ async function readFolder(
   signal: AbortSignal,
 ): Promise<Omit<Intake, 'roughMix'>> {
   const { files, problems } = await listFolder(root, signal);
-  const own = out === null ? null : relative(root, resolve(out)).split(sep).join('/');
+  // Only a zip: whatever else lies there under that name must not be written over.
+  const own = out?.endsWith('.zip') ? relative(root, resolve(out)).split(sep).join('/') : null;
   return {
     files: files.filter(({ path }) => path !== own),
     problems: problems.map(({ path, reason }) => ({ path, reason: folderReasons[reason] })),

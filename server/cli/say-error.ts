@@ -13,7 +13,7 @@ const sentences: Partial<Record<AppErrorCode, (words: Words) => string>> = {
     `${path} is one of the files that are checked. Give the package another name.`,
   'zip-refused': ({ path, text }) => {
     const reason = text('reason');
-    if (reason === 'not-a-zip') return `${path || 'This file'} is neither a folder nor a zip.`;
+    if (reason === 'not-a-zip' && path !== '') return `${path} is neither a folder nor a zip.`;
     const entry = text('entry') === '' ? '' : `, at ${printable(text('entry'))}`;
     return `The zip cannot be opened safely: ${zipReasons[reason] ?? reason}${entry}.`;
   },
@@ -22,6 +22,7 @@ const sentences: Partial<Record<AppErrorCode, (words: Words) => string>> = {
 };
 
 const zipReasons: Record<string, string> = {
+  'not-a-zip': 'its list of files is missing, so it is cut short or damaged',
   'damaged-directory': 'its list of files is damaged or cut short',
   'several-parts': 'it is one of several parts',
   'too-many-entries': 'it holds more files than any session has',

@@ -30,6 +30,7 @@ export async function buildReport(input: ReportInput): Promise<CheckReport> {
   const { check, repaired, information } = input;
   const { judgement } = check;
   const { plan, after } = repaired;
+  const repairs = describeRepairs(plan, check.files);
   return fitReport({
     schema: reportSchemaVersion,
     measureVersion,
@@ -58,7 +59,7 @@ export async function buildReport(input: ReportInput): Promise<CheckReport> {
       // Names are checked once more: a package must unpack anywhere.
       folderName: safeNamePart(folderName(input.rules.folder.template, information)),
       entries: plan.entries.map((entry, index) =>
-        reportEntry(entry, describeRepairs(entry, plan, check.files), after.files[index]!),
+        reportEntry(entry, repairs[index]!, after.files[index]!),
       ),
       leftOut: plan.leftOut,
       findings: allFindings(after.judgement),

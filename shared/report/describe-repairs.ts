@@ -1,27 +1,29 @@
-import { safeRepairKinds, type RepairKind } from '../findings/finding.ts';
+import type { RepairKind } from '../findings/finding.ts';
 import { fileNameOf, splitExtension } from '../pack/safe-names.ts';
 import type { Operation, PlannedEntry, RepairPlan } from '../repair/repair-plan.ts';
 import type { MeasuredFile } from '../session/measured-file.ts';
 
-/** What was done to the files of an entry, as repairs are called, in the order of doing. */
+/** What was done to the files of each entry, as repairs are called, in the order of doing. */
 export function describeRepairs(
-  entry: PlannedEntry,
-  plan: RepairPlan,
+  { entries }: Pick<RepairPlan, 'entries'>,
   files: readonly MeasuredFile[],
-): RepairKind[] {
-  const repairs: RepairKind[] = [];
-  const [first] = entry.from;
-  if (entry.from.length === 1 && first && isRenamed(first, entry)) repairs.push('rename');
-  const reading = files.find(({ path }) => path === first)?.reading;
-  if (entry.rewriteAsWav && reading?.kind === 'track' && isAiff(reading.format.container)) {
-    repairs.push('rewrite-container');
+): RepairKind[][] {
+  const readings = new Map(files.map(({ path, reading }) => [path, reading]));
+  const made = new Map<string, number>();
+  for (const path of entries.flatMap(({ from }) => from)) {
+    made.set(path, (made.get(path) ?? 0) + 1);
   }
-  const siblings = plan.entries.filter(({ from }) => first && from.includes(first)).length;
-  for (const { kind } of entry.operations) {
-    const repair = repairOf(kind, siblings > 1);
-    if (!repairs.includes(repair)) repairs.push(repair);
-  }
-  return repairs;
+  return entries.map((entry) => {
+    const [first = ''] = entry.from;
+    const reading = readings.get(first);
+    const wasAiff = reading?.kind === 'track' && /^aif/.test(reading.format.container);
+    const repairs = new Set<RepairKind>();
+    if (entry.from.length === 1 && isRenamed(first, entry)) repairs.add('rename');
+    if (entry.rewriteAsWav && wasAiff) repairs.add('rewrite-container');
+    const oneOfSeveral = (made.get(first) ?? 0) > 1;
+    for (const { kind } of entry.operations) repairs.add(repairOf(kind, oneOfSeveral));
+    return [...repairs];
+  });
 }
 
 /** Another ending alone comes with being rewritten. */
@@ -31,13 +33,8 @@ function isRenamed(path: string, { to, rewriteAsWav }: PlannedEntry): boolean {
   return rewriteAsWav ? splitExtension(was).base !== splitExtension(is).base : was !== is;
 }
 
-const isAiff = (container: string): boolean => container === 'aiff' || container === 'aifc';
-
 function repairOf(kind: Operation['kind'], oneOfSeveral: boolean): RepairKind {
   if (kind === 'take-channel') return oneOfSeveral ? 'split' : 'keep-one-side';
   if (kind === 'pad') return 'add-silence';
   return kind;
 }
-
-/** Whether a repair can be heard, so that it has to be said. */
-export const isAudible = (repair: RepairKind): boolean => !safeRepairKinds.includes(repair);
