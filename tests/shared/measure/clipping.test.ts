@@ -110,7 +110,7 @@ describe('clipped runs in recordings', () => {
   }, 120_000);
 });
 
-describe('clipped runs', () => {
+describe('clipped runs', { timeout: 30_000 }, () => {
   const loud = (frame: number) => 1.2 * Math.sin((2 * Math.PI * 220 * frame) / 48_000);
   const held = (level: number) => (sample: number) => Math.max(-level, Math.min(level, sample));
 

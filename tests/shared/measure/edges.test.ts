@@ -26,7 +26,7 @@ const fades: Record<string, (share: number) => number> = {
   cosine: (share) => (1 - Math.cos(share * Math.PI)) / 2,
 };
 
-describe('the edges of a file', () => {
+describe('the edges of a file', { timeout: 30_000 }, () => {
   it.each(Object.entries(sounds(9600)))('do not ramp where %s is cut', async (_, samples) => {
     // Cut one frame later each time, but for places within a twentieth of its peak around zero.
     for (let cut = 0; cut < 200; cut += 7) {

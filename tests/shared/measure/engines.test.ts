@@ -143,7 +143,7 @@ function differences(a: unknown, b: unknown, path: string, name = ''): string[] 
   return a === b ? [] : [`${path}: ${String(a)} instead of ${String(b)}`];
 }
 
-describe('the meters in WebAssembly', () => {
+describe('the meters in WebAssembly', { timeout: 120_000 }, () => {
   it('say what the plain ones say, whatever the file and however it is cut', async () => {
     const [meters, oracle] = [await loadMeters(), await createOracle()];
     await fc.assert(
@@ -165,7 +165,7 @@ describe('the meters in WebAssembly', () => {
       ),
       { numRuns: 300 },
     );
-  }, 120_000);
+  });
 
   it.each([
     ['one byte', () => 1],

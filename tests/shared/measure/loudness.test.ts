@@ -43,7 +43,7 @@ describe('K-weighting', () => {
   });
 });
 
-describe('integrated loudness', () => {
+describe('integrated loudness', { timeout: 30_000 }, () => {
   // EBU Tech 3341, table 1: 1 kHz in phase on both sides, peak levels; tolerance 0.1 LU.
   const cases: Record<string, readonly [expected: number, ...(readonly [number, number])[]]> = {
     '1, one level': [-23, [-23, 20]],

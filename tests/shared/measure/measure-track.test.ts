@@ -17,7 +17,7 @@ async function measure(source: ByteSource, reading = readTrack(file)) {
   return measureTrack(source, await reading, await newMeters());
 }
 
-describe('measuring a track', () => {
+describe('measuring a track', { timeout: 30_000 }, () => {
   it('reads the file once and one byte of it again', async () => {
     const source = countingSource(bytesSource(file));
     const { measures } = await measure(source);

@@ -111,7 +111,7 @@ describe('impossible samples', () => {
   });
 });
 
-describe('a pair of channels', () => {
+describe('a pair of channels', { timeout: 30_000 }, () => {
   const random = noise(5);
   const left = sampled(48_000, () => 0.5 * random());
   const other = sampled(48_000, () => 0.5 * random());

@@ -68,7 +68,7 @@ describe('digital silence', () => {
   });
 });
 
-describe('dropouts', () => {
+describe('dropouts', { timeout: 30_000 }, () => {
   it.each([8000, 44_100, 48_000, 96_000, 192_000])(
     'last from 1 to 100 ms at %i Hz',
     async (rate) => {

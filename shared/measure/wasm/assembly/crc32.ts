@@ -19,6 +19,9 @@ const tap4: usize = 300 * 16;
 const roomWords: i32 = 1024;
 
 const historyBytes: usize = tap4;
+const ahead1: usize = tap4 - tap1;
+const ahead2: usize = tap4 - tap2;
+const ahead3: usize = tap4 - tap3;
 const roomBytes: usize = <usize>roomWords * 16;
 
 const window: usize = memory.data(4800 + 16384, 16);
@@ -55,16 +58,15 @@ function fold(address: usize, count: usize): void {
     }
     const free = (roomBytes - roomUsed) >> 4;
     const now = min(free, count);
-    let to = window + historyBytes + roomUsed;
-    const end = to + (now << 4);
-    while (to < end) {
-      let word = v128.xor(v128.load(address), v128.load(to - tap1));
-      word = v128.xor(word, v128.load(to - tap2));
-      word = v128.xor(word, v128.load(to - tap3));
-      word = v128.xor(word, v128.load(to - tap4));
-      v128.store(to, word);
-      to += 16;
-      address += 16;
+    // Seen from the oldest word that takes part, all others lie ahead at fixed distances.
+    let oldest = window + roomUsed;
+    const end = oldest + (now << 4);
+    for (; oldest < end; oldest += 16, address += 16) {
+      let word = v128.xor(v128.load(address), v128.load(oldest));
+      word = v128.xor(word, v128.load(oldest, ahead3));
+      word = v128.xor(word, v128.load(oldest, ahead2));
+      word = v128.xor(word, v128.load(oldest, ahead1));
+      v128.store(oldest, word, historyBytes);
     }
     roomUsed += now << 4;
     count -= now;

@@ -58,15 +58,21 @@ function measure32(samples: usize, granules: i32): f64 {
     let high = low;
     let sum = f64x2.splat(0);
     let zeroCount = i32x4.splat(0);
-    for (const end = at + <usize>granuleFrames * 4; at < end; at += 16) {
+    for (const end = at + <usize>granuleFrames * 4; at < end; at += 32) {
       const x = v128.load(at);
-      low = f32x4.pmin(low, x);
-      high = f32x4.pmax(high, x);
-      zeroCount = i32x4.sub(zeroCount, f32x4.eq(x, zero));
-      const first = f64x2.promote_low_f32x4(x);
-      const second = f64x2.promote_low_f32x4(i32x4.shuffle(x, x, 2, 3, 2, 3));
-      sum = f64x2.add(sum, f64x2.add(first, second));
-      square = f64x2.add(square, f64x2.add(f64x2.mul(first, first), f64x2.mul(second, second)));
+      const y = v128.load(at, 16);
+      low = f32x4.pmin(low, f32x4.pmin(x, y));
+      high = f32x4.pmax(high, f32x4.pmax(x, y));
+      const zeroLanes = i32x4.add(f32x4.eq(x, zero), f32x4.eq(y, zero));
+      zeroCount = i32x4.sub(zeroCount, zeroLanes);
+      const x1 = f64x2.promote_low_f32x4(x);
+      const x2 = f64x2.promote_low_f32x4(i32x4.shuffle(x, x, 2, 3, 2, 3));
+      const y1 = f64x2.promote_low_f32x4(y);
+      const y2 = f64x2.promote_low_f32x4(i32x4.shuffle(y, y, 2, 3, 2, 3));
+      sum = f64x2.add(sum, f64x2.add(f64x2.add(x1, x2), f64x2.add(y1, y2)));
+      const squareX = f64x2.add(f64x2.mul(x1, x1), f64x2.mul(x2, x2));
+      const squareY = f64x2.add(f64x2.mul(y1, y1), f64x2.mul(y2, y2));
+      square = f64x2.add(square, f64x2.add(squareX, squareY));
     }
     low = f32x4.pmin(low, i32x4.shuffle(low, low, 2, 3, 2, 3));
     low = f32x4.pmin(low, i32x4.shuffle(low, low, 1, 1, 1, 1));
