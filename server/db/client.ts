@@ -1,8 +1,7 @@
 import { drizzle, type PostgresJsDatabase } from 'drizzle-orm/postgres-js';
 import postgres, { type Sql } from 'postgres';
-import * as schema from './schema.ts';
 
-export type Database = PostgresJsDatabase<typeof schema>;
+export type Database = PostgresJsDatabase;
 
 /** The database itself, or a transaction on it. */
 export type Transaction = Parameters<Parameters<Database['transaction']>[0]>[0];
@@ -34,7 +33,7 @@ export function openDatabase(databaseUrl: string, maxConnections = 10): Database
     // Notices of a migration ("relation exists, skipping") are not news.
     onnotice: () => undefined,
   });
-  return { db: drizzle(preparing(client), { schema }), close: () => client.end({ timeout: 5 }) };
+  return { db: drizzle(preparing(client)), close: () => client.end({ timeout: 5 }) };
 }
 
 /**

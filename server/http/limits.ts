@@ -2,7 +2,7 @@ import { isIPv6 } from 'node:net';
 import { RateLimiterDrizzle, RateLimiterRes } from 'rate-limiter-flexible';
 import { AppError } from '#shared/errors.ts';
 import type { Database } from '../db/client.ts';
-import { rateLimits } from '../db/schema.ts';
+import { rateLimits } from '../db/work-tables.ts';
 import { sha256Hex } from '../secret.ts';
 
 const minute = 60;

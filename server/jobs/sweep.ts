@@ -1,14 +1,8 @@
 import { lt } from 'drizzle-orm';
 import { fromNow, msPerDay, type Clock } from '../clock.ts';
 import type { Database } from '../db/client.ts';
-import {
-  accountTokens,
-  invitations,
-  mailOutbox,
-  rateLimits,
-  reportShares,
-  sessions,
-} from '../db/schema.ts';
+import { accountTokens, invitations, reportShares, sessions } from '../db/schema.ts';
+import { mailOutbox, rateLimits } from '../db/work-tables.ts';
 
 /** Notes about sent mails (recipient and time) are kept this long, to answer "did it go out?". */
 const mailKeptMs = 30 * msPerDay;

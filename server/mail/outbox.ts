@@ -1,4 +1,4 @@
-import { mailOutbox } from '../db/schema.ts';
+import { mailOutbox } from '../db/work-tables.ts';
 import type { Transaction } from '../db/client.ts';
 import { fromNow, msPerDay, type Clock } from '../clock.ts';
 import type { JobQueue } from '../jobs/queue.ts';

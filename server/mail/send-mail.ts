@@ -2,7 +2,7 @@ import { eq } from 'drizzle-orm';
 import type { Logger } from 'pino';
 import type { Clock } from '../clock.ts';
 import type { Database, Transaction } from '../db/client.ts';
-import { mailOutbox } from '../db/schema.ts';
+import { mailOutbox } from '../db/work-tables.ts';
 import { layOutHtml, layOutText } from './layout.ts';
 import { mailMessageSchema } from './messages.ts';
 import type { MailTransport } from './transport.ts';

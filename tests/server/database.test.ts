@@ -2,8 +2,11 @@ import { readFile } from 'node:fs/promises';
 import { generateDrizzleJson, generateMigration } from 'drizzle-kit/api';
 import postgres from 'postgres';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import * as schema from '../../server/db/schema.ts';
+import * as productTables from '../../server/db/schema.ts';
+import * as workTables from '../../server/db/work-tables.ts';
 import { createTestDatabase, type TestDatabase } from '../support/test-database.ts';
+
+const schema = { ...productTables, ...workTables };
 
 let migrated: TestDatabase;
 let sql: postgres.Sql;

@@ -1,6 +1,6 @@
 import { eq } from 'drizzle-orm';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
-import { mailOutbox } from '../../server/db/schema.ts';
+import { mailOutbox } from '../../server/db/work-tables.ts';
 import { jobQueue } from '../../server/jobs/queue.ts';
 import { layOutHtml, layOutText } from '../../server/mail/layout.ts';
 import type { MailMessage } from '../../server/mail/messages.ts';

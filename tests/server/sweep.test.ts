@@ -1,6 +1,7 @@
 import { afterAll, beforeAll, expect, it } from 'vitest';
 import * as accounts from '#shared/api/accounts.ts';
-import { accountTokens, mailOutbox, rateLimits, sessions } from '../../server/db/schema.ts';
+import { accountTokens, sessions } from '../../server/db/schema.ts';
+import { mailOutbox, rateLimits } from '../../server/db/work-tables.ts';
 import { sweepExpired } from '../../server/jobs/sweep.ts';
 import { createTestClock, startTestServer, type TestServer } from '../support/server-app.ts';
 import { openBrowser, signUp } from '../support/server-browser.ts';
