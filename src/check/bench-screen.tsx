@@ -12,10 +12,12 @@ import { BenchContext } from './bench-context.ts';
 import { Bench } from './bench.ts';
 import type { BenchState } from './bench-state.ts';
 import { Intake, Pickers, usePageDrop } from './intake.tsx';
+import { ExportedAgain } from './exported-again.tsx';
 import { IntakeProblems } from './intake-problems.tsx';
 import { ReadingProgressBar } from './reading-progress.tsx';
 import { ReportHeader } from './report-header.tsx';
 import { ReportView } from './report-view.tsx';
+import { readAgainWords } from './session-files.ts';
 import { SaveBar } from './save-bar.tsx';
 import { SongDetails } from './song-details.tsx';
 import { SongFields } from './song-fields.tsx';
@@ -99,6 +101,7 @@ function BusyBench({ bench, state, view, edition, projectId }: BusyBenchProps) {
         <Button aria-expanded={fieldsShown} onClick={() => setFieldsShown(!fieldsShown)}>
           Song details
         </Button>
+        {checked && <ExportedAgain bench={bench} canReadAgain={state.canReadAgain} />}
         {open.length > 0 && (
           <Button kind="primary" onClick={() => bench.choose(open)}>
             {open.length === 1 ? 'Fix this one for me' : `Fix these ${String(open.length)} for me`}
@@ -124,6 +127,11 @@ function BusyBench({ bench, state, view, edition, projectId }: BusyBenchProps) {
           <ErrorPanel error={state.failure} />
         </div>
       )}
+      {state.readAgain && (
+        <p role="status" className="px-4 pb-4 text-small sm:px-7">
+          {readAgainWords(state.readAgain)}
+        </p>
+      )}
       <IntakeProblems problems={state.problems} />
       <BenchContext value={bench}>
         <ReportView
@@ -135,10 +143,10 @@ function BusyBench({ bench, state, view, edition, projectId }: BusyBenchProps) {
       </BenchContext>
       <div className="flex flex-wrap items-center gap-x-6 gap-y-3 border-t border-line bg-sheet px-4 py-5 sm:px-7">
         <p className="text-small text-ink-2">
-          Exported something again? Drop the folder or single files anywhere: only what changed is
-          read.
+          One more file, or another take of one? Drop it anywhere: a file of the same name takes the
+          old one’s place.
         </p>
-        <Pickers onFolder={bench.drop} quiet />
+        <Pickers onFolder={bench.drop} onFailure={bench.fail} quiet />
       </div>
       {checked && state.report && (
         <SaveBar bench={bench} report={state.report}>

@@ -6,6 +6,7 @@ import {
   emptySessionInformation,
   type SessionInformation,
 } from '#shared/session/session-information.ts';
+import type { ReadAgain } from './session-files.ts';
 import type { ViewedSession } from './viewed-session.ts';
 
 export type BenchPhase = 'waiting' | 'making-sample' | 'measuring' | 'comparing' | 'checked';
@@ -31,6 +32,10 @@ export type BenchState = {
   progress: ReadingProgress | null;
   /** Milliseconds the last reading took and bytes it read; null until it is over. */
   reading: { ms: number; bytes: number } | null;
+  /** Whether the folder can be read again without being picked again. */
+  canReadAgain: boolean;
+  /** What the last reading of a session that was there already found; null for a first one. */
+  readAgain: ReadAgain | null;
   information: SessionInformation;
   chosen: readonly ChosenRepair[];
   /** What is found so far; complete once the phase is `checked`. */
@@ -48,6 +53,8 @@ export const waitingBench: BenchState = {
   problems: [],
   progress: null,
   reading: null,
+  canReadAgain: false,
+  readAgain: null,
   information: emptySessionInformation(),
   chosen: [],
   check: null,

@@ -6,27 +6,23 @@ import { unaskedRepairs } from '#shared/repair/choose-repairs.ts';
 import type { ChosenRepair, RepairPlan } from '#shared/repair/repair-plan.ts';
 import { buildReport } from '#shared/report/build-report.ts';
 import type { HouseRules } from '#shared/rules/house-rules.ts';
-import { measureAll } from '#shared/session/measure-all.ts';
 import type { MeasuredFile } from '#shared/session/measured-file.ts';
 import type { AnswerKind, SessionInformation } from '#shared/session/session-information.ts';
-import type { DroppedFolder } from '../browser/dropped-files.ts';
-import { fileOnDisk } from '../browser/file-source.ts';
+import { readFolder, type HeldFolder } from '../browser/folder-handle.ts';
 import { loadMeters } from '../browser/load-meters.ts';
 import type { FileToRead } from '../workers/file-to-read.ts';
 import { createMeasurePool, type MeasurePool } from '../workers/measure-pool.ts';
 import { makeSampleFiles } from '../workers/sample-link.ts';
 import { openSessionWorker, type SessionWorker } from '../workers/session-link.ts';
-import { answered } from './answers.ts';
+import { answered, answersStillAsked, repairsStillOpen } from './answers.ts';
 import { judgedFindings, waitingBench, type BenchState } from './bench-state.ts';
 import type { ExcerptPlace } from './excerpts.ts';
 import { listIntake } from './intake-list.ts';
+import { measureFiles } from './measure-files.ts';
 import { recallSong, rememberSong } from './remembered-songs.ts';
 import { sampleSong } from './sample-session/sample-song.ts';
+import { compareFileLists, isTrusted, joinFiles, joinOlder, stampOf } from './session-files.ts';
 import { viewCheck, viewUnfinished } from './viewed-session.ts';
-
-/** How often a running check is drawn anew, in milliseconds. */
-const previewMs = 250;
-const progressMs = 100;
 
 /** Typing should not render repaired files at every letter. */
 const typingMs = 400;
@@ -40,6 +36,12 @@ export class Bench {
   private readonly listeners = new Set<() => void>();
   readonly rules: HouseRules;
   private files: FileToRead[] = [];
+  /** The folder on the bench, where the browser lets it be read again. */
+  private held: FileSystemDirectoryHandle | null = null;
+  /** Files that were dropped beside the folder. */
+  private loose: FileToRead[] = [];
+  /** What a second reading that is stopped goes back to. */
+  private before: Checked | null = null;
   /** What was measured, by the file's stamp: a file that did not change is not read again. */
   private measured = new Map<string, MeasuredFile>();
   private comparison: Comparison | null = null;
@@ -66,15 +68,19 @@ export class Bench {
    * again: what did not change is not read again); loose files join the session on the bench and
    * replace files of their name.
    */
-  readonly drop = (folder: DroppedFolder): void => {
+  readonly drop = (folder: HeldFolder): void => {
+    void this.whileRunning((signal) => this.takeIn(folder, signal));
+  };
+
+  /**
+   * The person exported again: reads the folder on the bench once more, or the one they picked
+   * because the browser does not let a page do that by itself. It is the same song in any case.
+   */
+  readonly exportedAgain = (picked: HeldFolder | null): void => {
+    const { held } = this;
     void this.whileRunning(async (signal) => {
-      const intake = await listIntake(folder, () => this.sessionWorker(), signal);
-      const joins = intake.folderName === null && this.files.length > 0;
-      const files = joins ? joinFiles(this.files, intake.files) : intake.files;
-      const folderName = joins ? this.state.folderName : intake.folderName;
-      if (!joins && folderName !== this.state.folderName) this.startSong(folderName);
-      this.set({ folderName, problems: intake.problems });
-      await this.check(files, signal);
+      const folder = picked ?? (held && (await readFolder(held)));
+      if (folder) await this.takeIn(folder, signal, true);
     });
   };
 
@@ -82,6 +88,8 @@ export class Bench {
   readonly dropSample = (): void => {
     const { artist, title, bpm } = sampleSong;
     void this.whileRunning(async (signal) => {
+      this.held = null;
+      this.loose = [];
       this.set({
         ...waitingBench,
         phase: 'making-sample',
@@ -95,8 +103,13 @@ export class Bench {
   /** Stops at once. What was checked before a second reading stays on the bench. */
   readonly cancel = (): void => {
     this.running?.abort();
-    this.set({ ...waitingBench, information: this.state.information });
-    this.files = [];
+    const { before } = this;
+    if (!before) {
+      this.clear();
+      return;
+    }
+    this.restore(before);
+    this.judge(0);
   };
 
   readonly fail = (failure: unknown): void => this.set({ failure });
@@ -191,12 +204,57 @@ export class Bench {
     return this.module;
   }
 
+  private clear(): void {
+    this.files = [];
+    this.loose = [];
+    this.held = null;
+    this.set({ ...waitingBench, information: this.state.information });
+  }
+
+  private restore({ state, files, measured, comparison }: Checked): void {
+    this.files = files;
+    this.measured = measured;
+    this.comparison = comparison;
+    this.before = null;
+    this.set({ ...state, information: this.state.information });
+  }
+
   private startSong(folderName: string | null): void {
     const { artist, title, tempo } = this.state.information;
     // What was typed before the drop is about this song.
     const said = { ...(artist && { artist }), ...(title && { title }), ...(tempo && { tempo }) };
     const information = { ...(recallSong(folderName) ?? waitingBench.information), ...said };
+    this.before = null;
     this.set({ ...waitingBench, folderName, information });
+  }
+
+  private async takeIn(dropped: HeldFolder, signal: AbortSignal, again = false): Promise<void> {
+    const intake = await listIntake(dropped, () => this.sessionWorker(), signal);
+    const known = this.files;
+    const joins = intake.folderName === null && known.length > 0;
+    const folderName = joins ? this.state.folderName : intake.folderName;
+    const sameSong = joins || again || folderName === this.state.folderName;
+    if (joins) this.loose = joinFiles(this.loose, intake.files);
+    else {
+      this.held = dropped.handle;
+      if (!sameSong) this.loose = [];
+    }
+    if (!sameSong) this.startSong(folderName);
+    const files = joins ? joinFiles(known, intake.files) : joinOlder(intake.files, this.loose);
+    this.set({ folderName, problems: intake.problems, canReadAgain: this.held !== null });
+    await this.check(files, signal);
+    if (!sameSong || known.length === 0) return;
+    this.set({ readAgain: compareFileLists(known, files) });
+    this.forgetWhatIsGone();
+  }
+
+  /** After new exports: repairs and answers whose finding is gone fall away. */
+  private forgetWhatIsGone(): void {
+    const { check, chosen, information } = this.state;
+    if (!check) return;
+    const findings = judgedFindings(check);
+    this.set({ chosen: repairsStillOpen(chosen, findings) });
+    this.setInformation({ answers: answersStillAsked(information.answers, findings) });
   }
 
   private async whileRunning(work: (signal: AbortSignal) => Promise<void>): Promise<void> {
@@ -208,38 +266,40 @@ export class Bench {
     } catch (failure) {
       if (running.signal.aborted) return;
       // A second reading that fails leaves what was there.
+      if (this.before) this.restore(this.before);
       const phase = this.state.check && this.comparison ? 'checked' : 'waiting';
       this.set({ phase, failure });
+      if (phase === 'checked' && !this.state.repaired) this.judge(0, failure);
     }
   }
 
   private async check(files: FileToRead[], signal: AbortSignal): Promise<void> {
     if (files.length === 0) throw new AppError('nothing-to-check');
+    if (this.comparison && this.state.check) {
+      const { state, measured, comparison } = this;
+      this.before = { state, files: this.files, measured, comparison };
+    }
     this.files = files;
     this.comparison = null;
     this.repairing?.abort();
-    this.set({ phase: 'measuring', failure: null, reading: null, repaired: null, report: null });
+    this.set({ phase: 'measuring', failure: null, ...unread });
     const startedAt = performance.now();
-    const bytes = await this.measure(files, startedAt, signal);
+    const bytes = await this.measure(files, signal);
     const measured = this.measuredFiles();
     if (measured.every(({ reading }) => reading.kind === 'not-audio')) {
-      this.files = [];
-      this.set({ ...waitingBench, information: this.state.information });
+      if (!this.before) this.clear();
       throw new AppError('nothing-to-check');
     }
     this.set({ phase: 'comparing', reading: { ms: performance.now() - startedAt, bytes } });
     const worker = await this.sessionWorker();
     this.comparison = await worker.call('compare', { files, measured }, { signal });
+    this.before = null;
     this.set({ phase: 'checked', progress: null });
     this.judge(0);
   }
 
   /** Measures what is new or changed; answers how many bytes that was. */
-  private async measure(
-    files: readonly FileToRead[],
-    startedAt: number,
-    signal: AbortSignal,
-  ): Promise<number> {
+  private measure(files: readonly FileToRead[], signal: AbortSignal): Promise<number> {
     const kept = new Map(
       files.flatMap((file) => {
         const known = this.measured.get(stampOf(file));
@@ -247,48 +307,14 @@ export class Bench {
       }),
     );
     this.measured = kept;
-    const waiting = new Map(
-      files.filter((file) => !kept.has(stampOf(file))).map((file) => [file.path, file]),
-    );
+    const waiting = files.filter((file) => !kept.has(stampOf(file)));
     const pool = (this.pool ??= createMeasurePool(() => this.meters()));
-    const current = new Map<string, number>();
-    let previewAt = 0;
-    let progressAt = 0;
-    let bytes = 0;
-    await measureAll(
-      [...waiting.values()].map(({ path, file, size }) => ({ ...fileOnDisk(path, file), size })),
-      async ({ path }, options) => {
-        const file = waiting.get(path)!;
-        current.set(path, 0);
-        const measured = await pool.measure(file, {
-          signal: options.signal,
-          onProgress: (readBytes) => {
-            options.onBytes?.(readBytes - (current.get(path) ?? 0));
-            current.set(path, readBytes);
-          },
-        });
-        current.delete(path);
-        this.measured.set(stampOf(file), measured);
-        return measured;
-      },
-      {
-        atOnce: pool.size,
-        signal,
-        onProgress: (progress) => {
-          bytes = progress.bytes;
-          const now = performance.now();
-          if (now - progressAt > progressMs) {
-            progressAt = now;
-            this.set({ progress: { ...progress, startedAt, current: new Map(current) } });
-          }
-          if (now - previewAt > previewMs) {
-            previewAt = now;
-            this.preview();
-          }
-        },
-      },
-    );
-    return bytes;
+    return measureFiles(waiting, pool, {
+      signal,
+      onMeasured: (file, measured) => kept.set(stampOf(file), measured),
+      onProgress: (progress) => this.set({ progress }),
+      onPreview: () => this.preview(),
+    });
   }
 
   private measuredFiles(): MeasuredFile[] {
@@ -309,7 +335,7 @@ export class Bench {
   }
 
   /** Judges at once, and works out what the chosen repairs make after a pause. */
-  private judge(pauseMs: number): void {
+  private judge(pauseMs: number, failure: unknown = null): void {
     if (!this.comparison) return;
     const { rules } = this;
     const { information, chosen } = this.state;
@@ -324,7 +350,7 @@ export class Bench {
     this.repairing = repairing;
     clearTimeout(this.repairTimer);
     this.repairTimer = setTimeout(
-      () => void this.repair(check, information, chosen, repairing.signal),
+      () => void this.repair(check, information, chosen, repairing.signal, failure),
       pauseMs,
     );
   }
@@ -334,6 +360,7 @@ export class Bench {
     information: SessionInformation,
     chosen: readonly ChosenRepair[],
     signal: AbortSignal,
+    earlierFailure: unknown,
   ): Promise<void> {
     const { rules, files } = this;
     try {
@@ -342,32 +369,20 @@ export class Bench {
       const input = { files, rules, information, check, chosen: all };
       const repaired = await worker.call('repair', input, { signal });
       const report = await buildReport({ check, repaired, rules, information, engine: 'wasm' });
-      if (!signal.aborted) this.set({ repaired, report, failure: null });
+      if (!signal.aborted) this.set({ repaired, report, failure: earlierFailure });
     } catch (failure) {
       if (!signal.aborted) this.set({ failure });
     }
   }
 }
 
-/** The same path, length and time of change: the same file, as far as anybody can tell unread. */
-function stampOf({ path, size, file, zipPath }: FileToRead): string {
-  return [path, size, file.lastModified, zipPath ?? ''].join('\n');
-}
+/** A finished check, as it was before the files are read again. */
+type Checked = {
+  state: BenchState;
+  files: FileToRead[];
+  measured: Map<string, MeasuredFile>;
+  comparison: Comparison;
+};
 
-/** Whether reading the same file again would only give the same again. */
-function isTrusted({ reading, measures }: MeasuredFile): boolean {
-  const failed = reading.kind === 'unreadable' && reading.reason === 'could-not-be-read';
-  return !failed && measures?.changedWhileRead !== true;
-}
-
-/** Loose files replace those of the same name, wherever these lie in the folder; others join. */
-function joinFiles(before: readonly FileToRead[], loose: readonly FileToRead[]): FileToRead[] {
-  const nameOf = (path: string): string => path.slice(path.lastIndexOf('/') + 1).toLowerCase();
-  const joined = [...before];
-  for (const file of loose) {
-    const at = joined.findIndex(({ path }) => nameOf(path) === nameOf(file.path));
-    if (at < 0) joined.push(file);
-    else joined[at] = { ...file, path: joined[at]!.path };
-  }
-  return joined;
-}
+/** What a reading under way has not said yet. */
+const unread = { reading: null, repaired: null, report: null, readAgain: null } as const;

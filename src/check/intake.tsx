@@ -1,9 +1,15 @@
 import { useEffect, useRef, useState, type ReactNode } from 'react';
-import { readDrop, readPicked, type DroppedFolder } from '../browser/dropped-files.ts';
-import { Button } from '../ui/button.tsx';
+import { readPicked } from '../browser/dropped-files.ts';
+import {
+  hasFolderPicker,
+  pickFolder,
+  readDropAndHold,
+  type HeldFolder,
+} from '../browser/folder-handle.ts';
+import { Button, type ButtonKind } from '../ui/button.tsx';
 
 type IntakeProps = {
-  onFolder: (folder: DroppedFolder) => void;
+  onFolder: (folder: HeldFolder) => void;
   onFailure: (failure: unknown) => void;
   onSample: () => void;
   children?: ReactNode;
@@ -25,7 +31,7 @@ export function Intake({ onFolder, onFailure, onSample, children }: IntakeProps)
         The whole folder, as your recording program exported it. Every file is measured here, in
         your browser: nothing is uploaded.
       </p>
-      <Pickers onFolder={onFolder} />
+      <Pickers onFolder={onFolder} onFailure={onFailure} />
       <p className="text-small text-ink-2">
         No session at hand?{' '}
         <button type="button" className="text-link py-1" onClick={onSample}>
@@ -38,42 +44,71 @@ export function Intake({ onFolder, onFailure, onSample, children }: IntakeProps)
   );
 }
 
+type PickerProps = Pick<IntakeProps, 'onFolder' | 'onFailure'>;
+
 /** The buttons beside every drop. */
-export function Pickers({
-  onFolder,
-  quiet = false,
-}: Pick<IntakeProps, 'onFolder'> & { quiet?: boolean }) {
-  const folder = useRef<HTMLInputElement>(null);
+export function Pickers({ quiet = false, ...props }: PickerProps & { quiet?: boolean }) {
+  const { onFolder } = props;
   const files = useRef<HTMLInputElement>(null);
-  const picked = (input: HTMLInputElement): void => {
-    if (input.files && input.files.length > 0) onFolder(readPicked(input.files));
-    // The same folder can be picked again after it was exported anew.
-    input.value = '';
-  };
   return (
     <div className="flex flex-wrap justify-center gap-3">
-      <Button kind={quiet ? 'plain' : 'primary'} onClick={() => folder.current?.click()}>
+      <FolderButton kind={quiet ? 'plain' : 'primary'} {...props}>
         Choose a folder
-      </Button>
+      </FolderButton>
       <Button onClick={() => files.current?.click()}>Choose files</Button>
-      <input
-        ref={folder}
-        type="file"
-        hidden
-        webkitdirectory=""
-        aria-label="Folder to check"
-        onChange={(event) => picked(event.currentTarget)}
-      />
       <input
         ref={files}
         type="file"
         hidden
         multiple
         aria-label="Files to check"
-        onChange={(event) => picked(event.currentTarget)}
+        onChange={(event) => takePicked(event.currentTarget, onFolder)}
       />
     </div>
   );
+}
+
+/**
+ * Opens the folder picker whose folder can be read again later; where there is none, the one that
+ * every browser has.
+ */
+export function FolderButton({
+  onFolder,
+  onFailure,
+  kind,
+  children,
+}: PickerProps & { kind: ButtonKind; children: ReactNode }) {
+  const folder = useRef<HTMLInputElement>(null);
+  const pick = (): void => {
+    if (!hasFolderPicker()) {
+      folder.current?.click();
+      return;
+    }
+    pickFolder().then((picked) => picked && onFolder(picked), onFailure);
+  };
+  return (
+    <>
+      <Button kind={kind} onClick={pick}>
+        {children}
+      </Button>
+      <input
+        ref={folder}
+        type="file"
+        hidden
+        webkitdirectory=""
+        aria-label="Folder to check"
+        onChange={(event) => takePicked(event.currentTarget, onFolder)}
+      />
+    </>
+  );
+}
+
+function takePicked(input: HTMLInputElement, onFolder: IntakeProps['onFolder']): void {
+  if (input.files && input.files.length > 0) {
+    onFolder({ ...readPicked(input.files), handle: null });
+  }
+  // The same folder can be picked again after it was exported anew.
+  input.value = '';
 }
 
 /** Takes drops anywhere on the page; true while files hang over it. */
@@ -97,7 +132,7 @@ export function usePageDrop(
       if (!event.dataTransfer?.types.includes('Files')) return;
       event.preventDefault();
       setDragging(false);
-      readDrop(event.dataTransfer).then(onFolder, onFailure);
+      readDropAndHold(event.dataTransfer).then(onFolder, onFailure);
     };
     addEventListener('dragover', over);
     addEventListener('dragleave', leave);

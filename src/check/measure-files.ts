@@ -1,0 +1,66 @@
+import { measureAll } from '#shared/session/measure-all.ts';
+import type { MeasuredFile } from '#shared/session/measured-file.ts';
+import { fileOnDisk } from '../browser/file-source.ts';
+import type { FileToRead } from '../workers/file-to-read.ts';
+import type { MeasurePool } from '../workers/measure-pool.ts';
+import type { ReadingProgress } from './bench-state.ts';
+
+/** How often progress and what is found so far are told, in milliseconds. */
+const progressMs = 100;
+const previewMs = 250;
+
+export type MeasureFilesOptions = {
+  signal: AbortSignal;
+  onMeasured: (file: FileToRead, measured: MeasuredFile) => void;
+  onProgress: (progress: ReadingProgress) => void;
+  /** From time to time, when more files are measured. */
+  onPreview: () => void;
+};
+
+/** Measures files in the pool; answers how many bytes they have. Throws AppError as the pool does. */
+export async function measureFiles(
+  files: readonly FileToRead[],
+  pool: MeasurePool,
+  { signal, onMeasured, onProgress, onPreview }: MeasureFilesOptions,
+): Promise<number> {
+  const startedAt = performance.now();
+  const byPath = new Map(files.map((file) => [file.path, file]));
+  const current = new Map<string, number>();
+  let previewAt = 0;
+  let progressAt = 0;
+  let bytes = 0;
+  await measureAll(
+    files.map(({ path, file, size }) => ({ ...fileOnDisk(path, file), size })),
+    async ({ path }, options) => {
+      const file = byPath.get(path)!;
+      current.set(path, 0);
+      const measured = await pool.measure(file, {
+        signal: options.signal,
+        onProgress: (readBytes) => {
+          options.onBytes?.(readBytes - (current.get(path) ?? 0));
+          current.set(path, readBytes);
+        },
+      });
+      current.delete(path);
+      onMeasured(file, measured);
+      return measured;
+    },
+    {
+      atOnce: pool.size,
+      signal,
+      onProgress: (progress) => {
+        bytes = progress.bytes;
+        const now = performance.now();
+        if (now - progressAt > progressMs) {
+          progressAt = now;
+          onProgress({ ...progress, startedAt, current: new Map(current) });
+        }
+        if (now - previewAt > previewMs) {
+          previewAt = now;
+          onPreview();
+        }
+      },
+    },
+  );
+  return bytes;
+}
