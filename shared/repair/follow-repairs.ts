@@ -62,6 +62,12 @@ export function followComparison(comparison: Comparison, plan: RepairPlan): Comp
       const right = became.get(sides.right);
       return left && right ? [{ ...sides, left, right }] : [];
     }),
+    ...(comparison.alignments && {
+      alignments: comparison.alignments.flatMap((alignment) => {
+        const path = became.get(alignment.path);
+        return path ? [{ ...alignment, path }] : [];
+      }),
+    }),
   };
 }
 

@@ -38,8 +38,10 @@ export async function renderPlanned(
   const tracks: ReadTrack[] = [];
   for (const path of entry.from) {
     const file = dropped.files.get(path);
-    const reading = dropped.measured.get(path)?.reading;
-    if (file && reading?.kind === 'track') tracks.push({ file, reading });
+    const measured = dropped.measured.get(path);
+    if (!file || measured?.reading.kind !== 'track') continue;
+    const { reading, measures } = measured;
+    tracks.push({ file, reading, crc32: measures?.crc32 ?? null });
   }
   return tracks.length === entry.from.length ? renderEntry(entry, tracks) : null;
 }

@@ -1,3 +1,4 @@
+import { clashKey } from '../naming/fold-name.ts';
 import { parseName } from '../naming/parse-name.ts';
 import { proposeNames, type FileToName } from '../naming/propose-names.ts';
 import { fileNameOf, splitExtension } from '../pack/safe-names.ts';
@@ -16,12 +17,13 @@ export function nameDrafts(
   information: SessionInformation,
 ): string[] {
   const { artist, title, roles } = information;
+  const ownNames = namesToKeep(drafts.map((draft) => pathOf(draft, naming)));
   const files = drafts.map((draft, index): FileToName => {
     // Drafts of one split file would share a path.
     const path = `${index}/${pathOf(draft, naming)}`;
     const hand = handName(draft, information);
     const role = roles[draft.from[0] ?? ''];
-    const handMade = hand ?? (draft.rename ? null : stemOf(path));
+    const handMade = hand ?? (draft.rename ? null : ownNames[index]!);
     return {
       path,
       parsed: parseName(pathOf(draft, naming), naming, { artist, title }),
@@ -31,7 +33,19 @@ export function nameDrafts(
     };
   });
   const proposed = proposeNames(files, naming, { names: {}, roles: {} });
-  return files.map(({ path, handMade }) => handMade ?? proposed.get(path) ?? stemOf(path));
+  return files.map(
+    ({ path, handMade }, index) => handMade ?? proposed.get(path) ?? ownNames[index]!,
+  );
+}
+
+/** Own names; files that only their folders tell apart take the folder's name along. */
+function namesToKeep(paths: readonly string[]): string[] {
+  const keys = paths.map((path) => clashKey(stemOf(path)));
+  return paths.map((path, index) => {
+    const alone = keys.indexOf(keys[index]!) === keys.lastIndexOf(keys[index]!);
+    const folder = path.split('/').at(-2);
+    return alone || !folder ? stemOf(path) : `${folder} ${stemOf(path)}`;
+  });
 }
 
 const stemOf = (path: string): string => splitExtension(fileNameOf(path)).base;

@@ -7,7 +7,12 @@ import { bytesPerSample } from './sample-codec.ts';
 import type { TrackSource } from './source-frames.ts';
 
 /** A dropped track that could be read. */
-export type ReadTrack = { file: DroppedFile; reading: TrackReading };
+export type ReadTrack = {
+  file: DroppedFile;
+  reading: TrackReading;
+  /** CRC-32 of the whole file as it was checked; null where it was not measured. */
+  crc32: string | null;
+};
 
 /**
  * A track as it is packed: made from dropped files while it is read, always the same bytes. It

@@ -1,9 +1,13 @@
 import { packSession, repairSession } from '#shared/check.ts';
 import { createMeters } from '#shared/measure/create-meters.ts';
+import { verifyPackage } from '#shared/pack/verify-package.ts';
 import { drawTrackSheet } from '#shared/pack/track-sheet/draw-track-sheet.ts';
 import type { Package } from '#shared/pack/pack-entries.ts';
 import { droppedTracks, renderPlanned } from '#shared/repair/measure-entries.ts';
+import { rememberRenders } from '#shared/repair/remember-renders.ts';
 import { readExcerpt } from '#shared/session/read-excerpt.ts';
+import { withoutCommonFolder } from '#shared/session/common-folder.ts';
+import { isJunk } from '#shared/session/junk-files.ts';
 import { compareFiles } from '#shared/session/compare-files.ts';
 import { measureHere, type MeasureFile } from '#shared/session/measure-file.ts';
 import { writeToPickedFile } from '../browser/write-picked-file.ts';
@@ -21,12 +25,27 @@ const dropped = (files: FileToRead[]) => files.map(droppedFile);
 
 serveWorker<SessionApi>({
   load(module) {
-    measureFile = measureHere(createMeters(module));
+    measureFile = rememberRenders(measureHere(createMeters(module)));
     return Promise.resolve(null);
   },
   async listZip(file) {
     const { files, problems } = await listZip(file);
     return { files: files.map(({ path, size }) => ({ path, size })), problems };
+  },
+  async verifyZip(file, { signal, report }) {
+    const { files } = await listZip(file);
+    let bytes = 0;
+    let toldAt = 0;
+    return verifyPackage(withoutCommonFolder(files, isJunk), await loadChecksums(), {
+      signal,
+      onBytes: (more) => {
+        bytes += more;
+        const now = performance.now();
+        if (now - toldAt < 100) return;
+        toldAt = now;
+        report(bytes);
+      },
+    });
   },
   excerpt({ file, startFrame, frames }) {
     return readExcerpt(droppedFile(file), startFrame, frames);

@@ -42,7 +42,7 @@ export async function rendered(
       const file = droppedBytes(`source ${index}`, bytes, blockBytes);
       const reading = await readWave(bytesSource(bytes), file.path);
       if (reading.kind !== 'track') throw new Error(`source ${index} is no track`);
-      return { file, reading };
+      return { file, reading, crc32: null };
     }),
   );
   const entry: PlannedEntry = {
