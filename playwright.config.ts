@@ -1,18 +1,7 @@
 import { defineConfig } from '@playwright/test';
+import { chromiumFlags } from './tests/support/chromium.ts';
 import { findProduct } from './tests/support/product.ts';
 import { chromiumPath } from './server/dev/test-tools.mjs';
-
-/** Debian's Chromium, and nothing of it that talks to the outside. */
-const chromiumFlags = [
-  // Chromium refuses its sandbox to root, which is who runs it in containers.
-  ...(process.getuid?.() === 0 ? ['--no-sandbox'] : []),
-  '--disable-gpu',
-  '--disable-quic',
-  '--no-first-run',
-  '--disable-background-networking',
-  '--disable-component-update',
-  '--disable-sync',
-];
 
 const report = process.env.FLIGHTCASE_TEST_REPORT;
 

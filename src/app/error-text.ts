@@ -27,6 +27,16 @@ function waitWords(seconds: number | undefined): string {
   return `Try again in ${String(Math.ceil(seconds / 3600))} hours.`;
 }
 
+const zipOtherwise = 'It is damaged. Copy it again, or unpack it yourself and drop the folder.';
+
+/** What to do about a refused zip, by the reason that came with it. */
+const zipAdvice: Record<string, string | undefined> = {
+  'not-a-zip': 'It is called a zip, but it is not a zip. Drop the folder instead.',
+  'too-large': 'It unpacks to far more than a session holds. Drop the folder instead.',
+  'too-many-entries': 'It holds more files than a session does. Drop the folder instead.',
+  'several-parts': 'It is one part of several. Unpack them together and drop the folder instead.',
+};
+
 /** Words for every expected failure. A new code does not compile without its words. */
 const texts: Record<AppErrorCode, (details: Details) => ErrorText> = {
   'invalid-request': () => ({
@@ -114,7 +124,7 @@ const texts: Record<AppErrorCode, (details: Details) => ErrorText> = {
   }),
   'zip-refused': (details) => ({
     title: 'This zip cannot be opened safely.',
-    advice: textOf(details, 'reason') ?? 'Unpack it yourself and drop the folder instead.',
+    advice: zipAdvice[textOf(details, 'reason') ?? ''] ?? zipOtherwise,
   }),
   'rules-invalid': () => ({
     title: 'These house rules have mistakes in them.',
