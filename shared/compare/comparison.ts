@@ -32,9 +32,24 @@ export const sidesSchema = z.strictObject({
 });
 export type Sides = z.infer<typeof sidesSchema>;
 
+/**
+ * A file of another length: whether its notes begin with those of the others when all begin
+ * together, or when all end together (0: not at all, 1: always).
+ */
+export const alignmentSchema = z.strictObject({
+  path: z.string(),
+  /** The session's length minus this file's. */
+  lackingFrames: z.number().int(),
+  agreementFromStart: z.number().min(0).max(1),
+  agreementFromEnd: z.number().min(0).max(1),
+});
+export type Alignment = z.infer<typeof alignmentSchema>;
+
 export const comparisonSchema = z.strictObject({
   matches: z.array(matchSchema),
   sides: z.array(sidesSchema),
+  /** Left out where all files have one length. */
+  alignments: z.array(alignmentSchema).optional(),
 });
 export type Comparison = z.infer<typeof comparisonSchema>;
 

@@ -1,6 +1,6 @@
 import type { Measures } from '../measure/measures.ts';
 import type { TrackFormat } from '../wave/track-format.ts';
-import type { Match } from './comparison.ts';
+import type { Alignment, Comparison, Match } from './comparison.ts';
 import { framesAtRate, type SessionFormat } from './session-format.ts';
 
 /** What speaks for or against a track beginning at the same moment as the others. */
@@ -13,6 +13,8 @@ export type StartEvidence = {
   stampDifferenceFrames: number | null;
   /** It sounds within its first 10 ms while most tracks of full length do not. */
   soundsAtOnce: boolean;
+  /** It fits the others better when all end together than when all begin together. */
+  fitsAtEnd: boolean;
 };
 
 export type TrackForStart = { path: string; format: TrackFormat; measures: Measures };
@@ -22,6 +24,18 @@ const atOnceSeconds = 0.01;
 
 /** Exports of one session can differ by this much in length: their ends were rounded. */
 const roundingSeconds = 0.001;
+
+/**
+ * How much better notes must begin with those of others, and how well at least. Tried on a sampled
+ * band: of parts cut at their start a third are seen by it, of parts cut at their end one in a
+ * hundred is doubted.
+ */
+const betterAgreement = 0.15;
+const leastAgreement = 0.25;
+
+/** Parts that end together in the music do so within this time. */
+const endTogetherSeconds = 0.3;
+const leastEndSilenceSeconds = 0.25;
 
 /** A track that sounds in its first 10 ms (louder than -60 dBFS). */
 export function soundsAtOnce({ format, measures }: TrackForStart): boolean {
@@ -79,12 +93,13 @@ function entersLate({ format, measures }: TrackForStart): boolean {
 /**
  * Works out for every track whether its start is proven. A proof is: the time stamp most tracks
  * carry; the length at least half of the tracks have; or differing from that length only at a
- * silent end, by being shorter or by a millisecond of rounding. `silentEndDbfs` is the peak of the last 50 ms that still counts as silent.
+ * silent end, by being shorter or by a millisecond of rounding, unless it fits the others better
+ * at their end. `silentEndDbfs` is the peak of the last 50 ms that still counts as silent.
  */
 export function startEvidence(
   tracks: readonly TrackForStart[],
   session: SessionFormat,
-  matches: readonly Match[],
+  { matches, alignments = [] }: Comparison,
   rules: { lengthToleranceFrames: number; silentEndDbfs: number },
 ): StartEvidence[] {
   const sessionRateHz = session.sampleRateHz ?? 48_000;
@@ -99,6 +114,7 @@ export function startEvidence(
   const hasSessionLength = (track: TrackForStart): boolean =>
     sameLength(track.format, session, rules.lengthToleranceFrames);
   const fullLength = tracks.filter(hasSessionLength);
+  const endSilences = fullLength.map(endSilenceSeconds);
   const startsAtOnceAnyway = fullLength.filter(soundsAtOnce).length * 2 >= fullLength.length;
 
   return tracks.map((track) => {
@@ -112,6 +128,10 @@ export function startEvidence(
       shiftFrames: null,
       stampDifferenceFrames,
       soundsAtOnce: atOnce,
+      fitsAtEnd:
+        !hasSessionLength(track) &&
+        (keepsTimeAtEnd(track.path, alignments) ||
+          endsWithOthers(track, endSilences, (sessionFrames - frames) / sessionRateHz)),
     };
     if (stampDifferenceFrames === 0) evidence.proof = 'time-reference';
     else if (halfShareLength && hasSessionLength(track)) evidence.proof = 'equal-length';
@@ -125,6 +145,7 @@ export function startEvidence(
         halfShareLength &&
         frames - sessionFrames <= roundingSeconds * sessionRateHz &&
         !atOnce &&
+        !evidence.fitsAtEnd &&
         endsSilent(track.measures, rules.silentEndDbfs)
       )
         evidence.proof = 'silent-end';
@@ -177,6 +198,38 @@ function shiftByTwin(
     if (lacking > 0 && Math.abs(otherIsLaterBy - lacking) <= 2) return lacking;
   }
   return null;
+}
+
+/** Its notes begin with those of the others when all end together, and not when all begin so. */
+function keepsTimeAtEnd(path: string, alignments: readonly Alignment[]): boolean {
+  const alignment = alignments.find((one) => one.path === path);
+  if (!alignment) return false;
+  const { agreementFromStart, agreementFromEnd } = alignment;
+  return (
+    agreementFromEnd >= leastAgreement && agreementFromEnd - agreementFromStart >= betterAgreement
+  );
+}
+
+/**
+ * It is silent for as long at its end as a fifth of the tracks of full length are: placed at the
+ * common end it would end with them. Trimming an end leaves less silence than that.
+ */
+function endsWithOthers(
+  track: TrackForStart,
+  endSilences: readonly number[],
+  lackingSeconds: number,
+): boolean {
+  const own = endSilenceSeconds(track);
+  // So little can be missing at either end without anything showing here.
+  if (own < leastEndSilenceSeconds || lackingSeconds < 2 * endTogetherSeconds) return false;
+  const alike = endSilences.filter((other) => Math.abs(other - own) <= endTogetherSeconds).length;
+  return alike >= Math.max(2, endSilences.length / 5);
+}
+
+/** Seconds from the last sound (louder than -60 dBFS) to the end; all of a silent file. */
+function endSilenceSeconds({ format, measures }: TrackForStart): number {
+  const last = Math.max(-1, ...measures.channels.map(({ lastSoundFrame }) => lastSoundFrame ?? -1));
+  return (measures.frames - 1 - last) / format.sampleRateHz;
 }
 
 function endsSilent(measures: Measures, silentEndDbfs: number): boolean {

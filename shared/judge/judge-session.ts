@@ -190,7 +190,7 @@ function prepareSession(
     rules.format.sampleRatesHz,
     tolerance,
   );
-  const starts = startEvidence(measured, format, session.comparison.matches, {
+  const starts = startEvidence(measured, format, session.comparison, {
     lengthToleranceFrames: tolerance,
     silentEndDbfs: rules.signal.tailDbfs,
   });

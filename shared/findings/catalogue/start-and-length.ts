@@ -18,6 +18,8 @@ export const startAndLength = {
       shiftSeconds: z.number().nullable(),
       /** It sounds from its first moment, the others do not: perhaps its start was cut off. */
       soundsAtOnce: z.boolean(),
+      /** It fits the others better when all end together: perhaps its start was cut off. */
+      fitsAtEnd: z.boolean(),
     }),
     level: 'look',
     nextStep: 'decide',

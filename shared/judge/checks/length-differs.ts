@@ -28,6 +28,7 @@ export const lengthDiffers: TrackCheck = (track, session) => {
       startProven,
       shiftSeconds: start.shiftFrames === null ? null : start.shiftFrames / sampleRateHz,
       soundsAtOnce: start.soundsAtOnce,
+      fitsAtEnd: start.fitsAtEnd,
     },
     {
       level: levelOf(track, differenceFrames),

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import type { Match } from '#shared/compare/comparison.ts';
+import { emptyComparison, type Comparison, type Match } from '#shared/compare/comparison.ts';
 import { sessionFormat } from '#shared/compare/session-format.ts';
 import { speedRatio } from '#shared/compare/speed.ts';
 import { looksLikeLooseClips, startEvidence, type TrackForStart } from '#shared/compare/starts.ts';
@@ -14,9 +14,14 @@ function track(file: BuiltFile = {}): TrackForStart {
   return { path, format, measures };
 }
 
-function evidence(tracks: TrackForStart[], matches: Match[] = []) {
+function evidence(tracks: TrackForStart[], comparison: Partial<Comparison> = {}) {
   const formats = tracks.map(({ format }) => format);
-  return startEvidence(tracks, sessionFormat(formats, [], 0), matches, rules);
+  return startEvidence(
+    tracks,
+    sessionFormat(formats, [], 0),
+    { ...emptyComparison(), ...comparison },
+    rules,
+  );
 }
 
 const full = (count: number, file: BuiltFile = {}) =>
@@ -112,6 +117,31 @@ describe('startEvidence', () => {
     expect(evidence([...beat, atOnce(0)]).at(-1)?.proof).toBe('silent-end');
   });
 
+  it('does not where it keeps time with the others at their end', () => {
+    const short = track({ path: 'Short.wav', format: { frames: song - 96_000 } });
+    const agree = (agreementFromStart: number, agreementFromEnd: number) =>
+      evidence([...full(3), short], {
+        alignments: [
+          { path: 'Short.wav', lackingFrames: 96_000, agreementFromStart, agreementFromEnd },
+        ],
+      }).at(-1);
+    expect(agree(0.1, 0.25)).toMatchObject({ proof: null, fitsAtEnd: true });
+    expect(agree(0.11, 0.25)).toMatchObject({ proof: 'silent-end', fitsAtEnd: false });
+    expect(agree(0, 0.24)).toMatchObject({ proof: 'silent-end', fitsAtEnd: false });
+  });
+
+  it('does not where it is silent at its end for as long as others are at theirs', () => {
+    // Full tracks: 8,639,999 - 8,400,000 frames, 5 s.
+    const silentFor = (seconds: number) =>
+      track({
+        format: { frames: song - 96_000 },
+        channel: { lastSoundFrame: song - 96_000 - 1 - Math.round(seconds * 48_000) },
+      });
+    expect(evidence([...full(3), silentFor(5.29)]).at(-1)?.proof).toBeNull();
+    expect(evidence([...full(3), silentFor(5.31)]).at(-1)?.proof).toBe('silent-end');
+    expect(evidence([...full(3), silentFor(0.1)]).at(-1)?.proof).toBe('silent-end');
+  });
+
   it('proves starts by the time stamp most tracks carry, whatever their lengths', () => {
     const stamped = [song, song - 10, song - 20, song - 30].map((frames) =>
       track({ format: { frames, timeReferenceFrames: 172_800_000 } }),
@@ -156,8 +186,8 @@ describe('startEvidence', () => {
       inverted: false,
       differenceUnderDb: 80,
     });
-    expect(evidence(tracks, [match(-48_000)]).at(-1)?.shiftFrames).toBe(48_000);
-    expect(evidence(tracks, [match(-40_000)]).at(-1)?.shiftFrames).toBeNull();
+    expect(evidence(tracks, { matches: [match(-48_000)] }).at(-1)?.shiftFrames).toBe(48_000);
+    expect(evidence(tracks, { matches: [match(-40_000)] }).at(-1)?.shiftFrames).toBeNull();
   });
 });
 

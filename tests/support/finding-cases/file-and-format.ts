@@ -141,6 +141,7 @@ export const fileAndFormatCases = {
           startProven: true,
           shiftSeconds: null,
           soundsAtOnce: false,
+          fitsAtEnd: false,
         },
       },
     ],

@@ -14,6 +14,7 @@ const shorterBy20 = {
   startProven: false,
   shiftSeconds: null,
   soundsAtOnce: false,
+  fitsAtEnd: false,
 };
 
 /** Clips that sound at once, of lengths that spread. */
@@ -110,6 +111,7 @@ export const startAndLengthCases = {
           startProven: false,
           shiftSeconds: null,
           soundsAtOnce: false,
+          fitsAtEnd: false,
         },
       },
       {
@@ -171,6 +173,7 @@ export const startAndLengthCases = {
           startProven: false,
           shiftSeconds: null,
           soundsAtOnce: true,
+          fitsAtEnd: false,
         },
       },
     ],

@@ -1,3 +1,4 @@
+import type { ArgumentsOf } from '../definitions.ts';
 import type { startAndLength } from '../start-and-length.ts';
 import type { LanguageWords } from '../words.ts';
 
@@ -34,9 +35,7 @@ export const startAndLengthWords: Pick<LanguageWords, keyof typeof startAndLengt
         };
       return {
         title,
-        what: args.soundsAtOnce
-          ? `${lengths} It sounds from its very first moment while most others do not, so perhaps its start was cut off.`
-          : `${lengths} Nothing in the files proves that it begins with the others.`,
+        what: `${lengths} ${startDoubt(args)}`,
         why: 'If only its end differs, all is well. If its start does, the whole part plays at the wrong time.',
         how: 'Export it again with the same start and end as the others, or say that it is on purpose.',
       };
@@ -80,3 +79,11 @@ export const startAndLengthWords: Pick<LanguageWords, keyof typeof startAndLengt
     several: (count) => `${count} files end while they still ring`,
   },
 };
+
+function startDoubt({ soundsAtOnce, fitsAtEnd }: ArgumentsOf<'length-differs'>): string {
+  if (soundsAtOnce)
+    return 'It sounds from its very first moment while most others do not, so perhaps its start was cut off.';
+  if (fitsAtEnd)
+    return 'It seems to fit the others at their end rather than at their start, so perhaps its start was cut off.';
+  return 'Nothing in the files proves that it begins with the others.';
+}
