@@ -149,7 +149,7 @@ function BusyBench({ bench, state, view, edition, projectId }: BusyBenchProps) {
         <Pickers onFolder={bench.drop} onFailure={bench.fail} quiet />
       </div>
       {checked && state.report && (
-        <SaveBar bench={bench} report={state.report}>
+        <SaveBar bench={bench} report={state.report} verification={state.verification}>
           <StoreReport
             report={state.report}
             overviews={overviews}

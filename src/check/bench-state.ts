@@ -1,5 +1,6 @@
 import type { RepairedSession, SessionCheck } from '#shared/check.ts';
 import type { Finding } from '#shared/findings/finding.ts';
+import type { PackageVerification } from '#shared/pack/verify-package.ts';
 import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
 import type { CheckReport } from '#shared/report/check-report.ts';
 import {
@@ -34,6 +35,7 @@ export type BenchState = {
   reading: { ms: number; bytes: number } | null;
   /** Whether the folder can be read again without being picked again. */
   canReadAgain: boolean;
+  verification: ZipVerification | null;
   /** What the last reading of a session that was there already found; null for a first one. */
   readAgain: ReadAgain | null;
   information: SessionInformation;
@@ -47,6 +49,14 @@ export type BenchState = {
   failure: unknown;
 };
 
+/** A zip that is, or was, compared with its own list of checksums. */
+export type ZipVerification = { fileName: string } & (
+  | { step: 'reading'; bytesRead: number; bytes: number }
+  /** null: there is no list in it. */
+  | { step: 'done'; found: PackageVerification | null }
+  | { step: 'failed'; failure: unknown }
+);
+
 export const waitingBench: BenchState = {
   phase: 'waiting',
   folderName: null,
@@ -54,6 +64,7 @@ export const waitingBench: BenchState = {
   progress: null,
   reading: null,
   canReadAgain: false,
+  verification: null,
   readAgain: null,
   information: emptySessionInformation(),
   chosen: [],

@@ -2,6 +2,7 @@ import { judgeCheck, type SessionCheck } from '#shared/check.ts';
 import { emptyComparison, type Comparison } from '#shared/compare/comparison.ts';
 import { AppError } from '#shared/errors.ts';
 import type { Finding } from '#shared/findings/finding.ts';
+import { checksumFileName } from '#shared/pack/safe-names.ts';
 import { unaskedRepairs } from '#shared/repair/choose-repairs.ts';
 import type { ChosenRepair, RepairPlan } from '#shared/repair/repair-plan.ts';
 import { buildReport } from '#shared/report/build-report.ts';
@@ -17,11 +18,12 @@ import { openSessionWorker, type SessionWorker } from '../workers/session-link.t
 import { answered, answersStillAsked, repairsStillOpen } from './answers.ts';
 import { judgedFindings, waitingBench, type BenchState } from './bench-state.ts';
 import type { ExcerptPlace } from './excerpts.ts';
-import { listIntake } from './intake-list.ts';
+import { isCopyOf, listIntake, zipAlone } from './intake-list.ts';
 import { measureFiles } from './measure-files.ts';
 import { recallSong, rememberSong } from './remembered-songs.ts';
 import { sampleSong } from './sample-session/sample-song.ts';
 import { compareFileLists, isTrusted, joinFiles, joinOlder, stampOf } from './session-files.ts';
+import { verifyZip } from './verify-zip.ts';
 import { viewCheck, viewUnfinished } from './viewed-session.ts';
 
 /** Typing should not render repaired files at every letter. */
@@ -40,6 +42,8 @@ export class Bench {
   private held: FileSystemDirectoryHandle | null = null;
   /** Files that were dropped beside the folder. */
   private loose: FileToRead[] = [];
+  /** The name of the zip that was downloaded last. */
+  private handedOver: string | null = null;
   /** What a second reading that is stopped goes back to. */
   private before: Checked | null = null;
   /** What was measured, by the file's stamp: a file that did not change is not read again. */
@@ -69,6 +73,11 @@ export class Bench {
    * replace files of their name.
    */
   readonly drop = (folder: HeldFolder): void => {
+    const zip = zipAlone(folder);
+    if (zip && this.handedOver !== null && isCopyOf(zip.name, this.handedOver)) {
+      void this.verify(zip);
+      return;
+    }
     void this.whileRunning((signal) => this.takeIn(folder, signal));
   };
 
@@ -111,6 +120,21 @@ export class Bench {
     this.restore(before);
     this.judge(0);
   };
+
+  /**
+   * A zip went to the browser's downloads, where a page cannot read it back: when a file of that
+   * name is dropped, it is compared with its list of checksums, and the bench stays as it is.
+   */
+  readonly expectBack = (fileName: string): void => {
+    this.handedOver = fileName;
+  };
+
+  /** Compares a zip with the list of checksums in it, and says what came of it. */
+  readonly verify = (zip: File, signal?: AbortSignal): Promise<void> =>
+    verifyZip(zip, () => this.sessionWorker(), {
+      signal,
+      onChange: (verification) => this.set({ verification }),
+    });
 
   readonly fail = (failure: unknown): void => this.set({ failure });
 
@@ -242,6 +266,10 @@ export class Bench {
     if (!sameSong) this.startSong(folderName);
     const files = joins ? joinFiles(known, intake.files) : joinOlder(intake.files, this.loose);
     this.set({ folderName, problems: intake.problems, canReadAgain: this.held !== null });
+    const zip = zipAlone(dropped);
+    if (zip && intake.files.some(({ path }) => path === checksumFileName))
+      void this.verify(zip, signal);
+    else this.set({ verification: null });
     await this.check(files, signal);
     if (!sameSong || known.length === 0) return;
     this.set({ readAgain: compareFileLists(known, files) });

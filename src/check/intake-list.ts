@@ -10,28 +10,45 @@ type IntakeList = { folderName: string | null; files: FileToRead[]; problems: In
 
 /** Lists what was dropped: a folder, files, or the inside of a zip. Throws `zip-refused`. */
 export async function listIntake(
-  { folderName, files }: DroppedFolder,
+  dropped: DroppedFolder,
   openWorker: () => Promise<SessionWorker>,
   signal: AbortSignal,
 ): Promise<IntakeList> {
-  const [only] = files;
-  if (files.length !== 1 || !only || !/\.zip$/i.test(only.path)) {
+  const { folderName, files } = dropped;
+  const zipFile = zipAlone(dropped);
+  if (!zipFile) {
     const listed = files.map(({ path, file }) => ({ path, size: file.size, file }));
     return { folderName, files: listed, problems: [] };
   }
   const worker = await openWorker();
-  const zip = await worker.call('listZip', only.file, { signal });
+  const zip = await worker.call('listZip', zipFile, { signal });
   const entries = zip.files.map(({ path, size }) => ({
     path,
     size,
-    file: only.file,
+    file: zipFile,
     zipPath: path,
   }));
   return {
-    folderName: only.file.name.replace(/\.zip$/i, ''),
+    folderName: zipFile.name.replace(/\.zip$/i, ''),
     files: withoutCommonFolder(entries, isJunk),
     problems: zip.problems.map(({ path, reason }) => ({ path, reason: zipReasons[reason] })),
   };
+}
+
+/** The zip, where nothing else was dropped. */
+export function zipAlone({ files }: DroppedFolder): File | null {
+  const [only] = files;
+  return files.length === 1 && only && /\.zip$/i.test(only.path) ? only.file : null;
+}
+
+/** Browsers number a download whose name is taken: `song.zip`, `song (1).zip`. */
+export function isCopyOf(fileName: string, original: string): boolean {
+  const bare = (name: string): string =>
+    name
+      .normalize('NFC')
+      .replace(/\.zip$/i, '')
+      .replace(/ ?\(\d+\)$/, '');
+  return bare(fileName) === bare(original);
 }
 
 const zipReasons: Record<ZipProblem['reason'], string> = {

@@ -1,4 +1,4 @@
-import { useState, type ReactNode } from 'react';
+import { useRef, useState, type ReactNode } from 'react';
 import { AppError } from '#shared/errors.ts';
 import { describeFinding } from '#shared/findings/catalogue/describe-finding.ts';
 import type { Finding } from '#shared/findings/finding.ts';
@@ -10,18 +10,25 @@ import { Progress } from '../ui/progress.tsx';
 import { TapeLabel } from '../ui/tape-label.tsx';
 import type { PackOutput, PackProgress } from '../workers/session-api.ts';
 import type { Bench } from './bench.ts';
+import type { ZipVerification } from './bench-state.ts';
 import { byteWords } from './byte-words.ts';
 import { fileName } from './file-name.ts';
 import { PackingList } from './packing-list.tsx';
 import { hasSavePicker, pickZip, saveZip } from './save-zip.ts';
+import { Verification } from './verification-words.tsx';
 import { findingKey } from './viewed-session.ts';
 
-type SaveBarProps = { bench: Bench; report: CheckReport; children?: ReactNode };
+type SaveBarProps = {
+  bench: Bench;
+  report: CheckReport;
+  verification: ZipVerification | null;
+  children?: ReactNode;
+};
 
 type Saving = { total: number; progress: PackProgress | null; abort: AbortController };
 
 /** What is about to be saved, how far it is, and what came of it. */
-export function SaveBar({ bench, report, children }: SaveBarProps) {
+export function SaveBar({ bench, report, verification, children }: SaveBarProps) {
   const [listShown, setListShown] = useState(false);
   const [saving, setSaving] = useState<Saving | null>(null);
   const [saved, setSaved] = useState<(PackOutput & { picked: boolean }) | null>(null);
@@ -46,6 +53,7 @@ export function SaveBar({ bench, report, children }: SaveBarProps) {
         onProgress: (progress) => setSaving({ total, progress, abort }),
       });
       setSaved({ ...output, picked: handle !== null });
+      if (!handle) bench.expectBack(fileName);
     } catch (cause) {
       if (!(cause instanceof AppError && cause.code === 'cancelled')) setFailure(cause);
     } finally {
@@ -60,7 +68,13 @@ export function SaveBar({ bench, report, children }: SaveBarProps) {
       {saved && (
         <p role="status" className="mb-2 text-small">
           {savedWords(saved)}
+          {!saved.picked && <VerifyDownload bench={bench} />}
         </p>
+      )}
+      {verification && (
+        <div className="mb-3">
+          <Verification verification={verification} />
+        </div>
       )}
       <div className="flex flex-wrap items-center gap-x-4 gap-y-2">
         <TapeLabel name={fileName} />
@@ -104,6 +118,33 @@ export function SaveBar({ bench, report, children }: SaveBarProps) {
         <PackingList report={report} onChange={bench.setInformation} />
       </Dialog>
     </footer>
+  );
+}
+
+/** A page cannot read the downloads back by itself, so the person drops the zip, or picks it. */
+function VerifyDownload({ bench }: { bench: Bench }) {
+  const zip = useRef<HTMLInputElement>(null);
+  return (
+    <>
+      {' '}
+      To be sure it arrived whole, drop the zip here to verify it, or{' '}
+      <button type="button" className="text-link py-1" onClick={() => zip.current?.click()}>
+        choose it
+      </button>
+      .
+      <input
+        ref={zip}
+        type="file"
+        hidden
+        accept=".zip"
+        aria-label="Zip to verify"
+        onChange={({ currentTarget }) => {
+          const file = currentTarget.files?.[0];
+          if (file) void bench.verify(file);
+          currentTarget.value = '';
+        }}
+      />
+    </>
   );
 }
 

@@ -1,6 +1,7 @@
 import type { RepairedSession, SessionCheck } from '#shared/check.ts';
 import type { FileToRead } from './file-to-read.ts';
 import type { Comparison } from '#shared/compare/comparison.ts';
+import type { PackageVerification } from '#shared/pack/verify-package.ts';
 import type { ChosenRepair, RepairPlan } from '#shared/repair/repair-plan.ts';
 import type { CheckReport } from '#shared/report/check-report.ts';
 import type { HouseRules } from '#shared/rules/house-rules.ts';
@@ -31,6 +32,11 @@ export type SessionApi = {
   load: { input: WebAssembly.Module; progress: never; output: null };
   /** What is in a dropped zip. Throws AppError `zip-refused`. */
   listZip: { input: File; progress: never; output: ListedZip };
+  /**
+   * Compares the files of a zip with its own list of checksums; null where it has none. Progress is
+   * bytes read so far. Throws AppError `zip-refused`.
+   */
+  verifyZip: { input: File; progress: number; output: PackageVerification | null };
   /** Some frames of a dropped file, one array a channel, full scale = 1. */
   excerpt: { input: Excerpt & { file: FileToRead }; progress: never; output: Float32Array[] };
   /** The same frames as they will be in the zip; null where the file is not packed as a track. */
