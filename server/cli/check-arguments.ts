@@ -13,6 +13,7 @@ export const usage = `Checks a folder (or zip) of exported tracks before it is s
   --repair safe           make the repairs that cannot change how anything sounds
   --out <file.zip>        write the package; the files themselves are never touched
   --json                  print the report, and nothing else, to standard output
+  --schema                print the JSON Schema of the report
   --help
 
 Exit codes: 0 nothing must be fixed, 1 something must be fixed (after repairs,
@@ -34,10 +35,11 @@ export type CheckArguments = {
 /** Something about the command itself that cannot be understood; one sentence. */
 export class ArgumentProblem extends Error {}
 
-/** null where help was asked for. Throws ArgumentProblem. */
-export function parseCheckArguments(args: readonly string[]): CheckArguments | null {
+/** Or what was asked for instead of a check. Throws ArgumentProblem. */
+export function parseCheckArguments(args: readonly string[]): CheckArguments | 'help' | 'schema' {
   const { values, positionals } = parse(args);
-  if (values.help) return null;
+  if (values.help) return 'help';
+  if (values.schema) return 'schema';
   const [target, ...more] = positionals;
   if (target === undefined) throw new ArgumentProblem('Name the folder or zip to check.');
   if (more.length > 0) {
@@ -75,6 +77,7 @@ function parse(args: readonly string[]) {
         repair: { type: 'string' },
         out: { type: 'string' },
         json: { type: 'boolean' },
+        schema: { type: 'boolean' },
         help: { type: 'boolean', short: 'h' },
       },
     });

@@ -12,8 +12,9 @@ import {
 
 try {
   const args = parseCheckArguments(process.argv.slice(2));
-  if (args) await run(args);
-  else process.stdout.write(usage);
+  if (args === 'help') process.stdout.write(usage);
+  else if (args === 'schema') await printSchema();
+  else await run(args);
 } catch (error) {
   if (!(error instanceof ArgumentProblem)) throw error;
   process.stderr.write(`${error.message}\n\n${usage}`);
@@ -23,4 +24,9 @@ try {
 async function run(args: CheckArguments): Promise<void> {
   const { runCheck } = await import('./run-check.ts');
   process.exitCode = await runCheck(args);
+}
+
+async function printSchema(): Promise<void> {
+  const { reportJsonSchema } = await import('#shared/report/read-report.ts');
+  process.stdout.write(`${JSON.stringify(reportJsonSchema(), null, 2)}\n`);
 }

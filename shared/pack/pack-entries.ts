@@ -97,9 +97,10 @@ async function* streamVerified(
 ): AsyncGenerator<Uint8Array, void, void> {
   const changed = () => new AppError('file-changed', { path: file.from[0] ?? file.to });
   const source = await file.open();
+  const sha256 = checksums.sha256();
+  let digest: string | null = null;
   try {
     if (source.size !== file.bytes) throw changed();
-    const sha256 = checksums.sha256();
     let crc = 0;
     let bytes = 0;
     for await (const block of source.stream(0, signal)) {
@@ -110,8 +111,11 @@ async function* streamVerified(
       yield block;
     }
     if (bytes !== file.bytes || crc !== file.crc32) throw changed();
-    hashed(sha256.digestHex());
+    digest = sha256.digestHex();
+    hashed(digest);
   } finally {
+    // A hasher that is used again has to be closed, also when the zip is given up here.
+    if (digest === null) sha256.digestHex();
     await source.close();
   }
 }

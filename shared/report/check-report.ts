@@ -20,40 +20,49 @@ export const verdicts = ['ready', 'look', 'must-fix'] as const;
 const fileFindingSchema = findingSchema.omit({ files: true, perFile: true });
 
 export const reportFileSchema = z.strictObject({
-  /** Relative to the dropped folder, with `/`. */
-  path: z.string(),
+  path: z.string().describe('Relative to the dropped folder, with `/`.'),
   bytes: z.number().int().nonnegative(),
   role: z.enum(fileRoles),
-  /** What the reader made of it; with format and measures this is what the judge needs. */
-  reading: judgedReadingSchema,
-  /** null for what is not measured (other audio, notes, unreadable). */
-  format: trackFormatSchema.nullable(),
+  reading: judgedReadingSchema.describe(
+    'What the reader made of it; with format and measures this is what the judge needs.',
+  ),
+  format: trackFormatSchema
+    .nullable()
+    .describe('null for what is not measured (other audio, notes, unreadable).'),
   measures: measuresSchema.nullable(),
-  /** Group id of the naming table; null if no instrument was recognised. */
-  group: z.string().nullable(),
-  /** Without extension; null where no name can be proposed. */
-  proposedName: z.string().nullable(),
+  group: z
+    .string()
+    .nullable()
+    .describe('Group id of the naming table; null if no instrument was recognised.'),
+  proposedName: z
+    .string()
+    .nullable()
+    .describe('Without extension; null where no name can be proposed.'),
   findings: z.array(fileFindingSchema),
 });
 export type ReportFile = z.infer<typeof reportFileSchema>;
 
 /** One file of the package. Beside its audio it says what was done to it, and to what. */
 export const reportEntrySchema = z.strictObject({
-  /** Paths in the dropped folder; two where left and right were joined. */
-  from: z.array(z.string()).min(1).max(2),
-  /** Path in the package folder. */
-  to: z.string(),
-  /** What was done, in the order of doing; empty for a copy under the same name. */
-  repairs: z.array(z.enum(repairKinds)),
+  from: z
+    .array(z.string())
+    .min(1)
+    .max(2)
+    .describe('Paths in the dropped folder; two where left and right were joined.'),
+  to: z.string().describe('Path in the package folder.'),
+  repairs: z
+    .array(z.enum(repairKinds))
+    .describe('What was done, in the order of doing; empty for a copy under the same name.'),
   operations: z.array(operationSchema),
   bytes: z.number().int().nonnegative(),
-  /** CRC-32 of the packed file, 8 hex digits; null for what was not measured (notes, pictures). */
   crc32: z
     .string()
     .regex(/^[0-9a-f]{8}$/)
-    .nullable(),
-  /** Only where a repair made other audio of it; else those of its source hold. */
-  format: trackFormatSchema.nullable(),
+    .nullable()
+    .describe('CRC-32 of the packed file, 8 hex digits; null for what was not measured'),
+  format: trackFormatSchema
+    .nullable()
+    .describe('Only where a repair made other audio of it; else those of its source hold.'),
   measures: measuresSchema.nullable(),
 });
 export type ReportEntry = z.infer<typeof reportEntrySchema>;
@@ -65,23 +74,24 @@ export const checkReportSchema = z.strictObject({
   schema: z.literal(reportSchemaVersion),
   measureVersion: z.number().int(),
   judgeVersion: z.number().int(),
-  /** SHA-256 over the canonical JSON of the rules that judged, 64 hex digits. */
-  rulesHash: z.string().regex(/^[0-9a-f]{64}$/),
-  /** Which meters ran: `wasm` or `oracle`. */
-  engine: z.enum(['wasm', 'oracle']),
-  /** Of what is packed. */
-  verdict: z.enum(verdicts),
-  /** Before any repair was taken; equal to verdict where none was. */
-  verdictBeforeRepairs: z.enum(verdicts),
+  rulesHash: z
+    .string()
+    .regex(/^[0-9a-f]{64}$/)
+    .describe('SHA-256 over the canonical JSON of the rules that judged, 64 hex digits.'),
+  engine: z.enum(['wasm', 'oracle']).describe('Which meters ran: `wasm` or `oracle`.'),
+  verdict: z.enum(verdicts).describe('Of what is packed.'),
+  verdictBeforeRepairs: z
+    .enum(verdicts)
+    .describe('Before any repair was taken; equal to verdict where none was.'),
   information: sessionInformationSchema,
-  /** As they were dropped, with what was found in them. */
-  files: z.array(reportFileSchema),
+  files: z.array(reportFileSchema).describe('As they were dropped, with what was found in them.'),
   session: z.strictObject({
     sampleRateHz: z.number().int().nullable(),
     bits: z.number().int().nullable(),
     frames: z.number().int().nullable(),
-    /** Whether it is proven that all tracks begin at the same moment. */
-    startsProven: z.boolean(),
+    startsProven: z
+      .boolean()
+      .describe('Whether it is proven that all tracks begin at the same moment.'),
     findings: z.array(findingSchema),
     comparison: comparisonSchema,
   }),
@@ -89,13 +99,14 @@ export const checkReportSchema = z.strictObject({
     folderName: z.string(),
     entries: z.array(reportEntrySchema),
     leftOut: z.array(leftOutSchema),
-    /** What is still found once the repairs are made; `files` are paths in the package. */
-    findings: z.array(findingSchema),
-    /** Of the packed files, by their paths in the package. */
-    comparison: comparisonSchema,
+    findings: z
+      .array(findingSchema)
+      .describe('What is still found once the repairs are made; `files` are paths in the package.'),
+    comparison: comparisonSchema.describe('Of the packed files, by their paths in the package.'),
   }),
-  /** Findings that remain, by level. */
-  counts: z.record(z.enum(levels), z.number().int().nonnegative()),
-  shortened: z.enum(shortenings),
+  counts: z
+    .record(z.enum(levels), z.number().int().nonnegative())
+    .describe('Findings that remain, by level.'),
+  shortened: z.enum(shortenings).describe('What was left away to keep the report small'),
 });
 export type CheckReport = z.infer<typeof checkReportSchema>;

@@ -39,6 +39,8 @@ function notAReport(error: z.ZodError): ReportReading {
 export function reportJsonSchema(): object {
   return {
     title: `Flightcase check report, schema ${reportSchemaVersion}`,
+    description:
+      'What a check found. Levels are dBFS re full scale, silence is null. Frames are samples per channel, ranges half open. Paths use /.',
     ...z.toJSONSchema(checkReportSchema, { io: 'output' }),
   };
 }

@@ -1,4 +1,6 @@
 import { spawn } from 'node:child_process';
+import { mkdir, writeFile } from 'node:fs/promises';
+import { dirname, join } from 'node:path';
 import { fileURLToPath } from 'node:url';
 import { run } from './outside-programs.ts';
 
@@ -59,4 +61,14 @@ export function runCheckCommand(
       resolve({ code, signal, stdout, stderr });
     });
   });
+}
+
+/** Writes files below a folder, with the folders they lie in; answers the folder. */
+export async function saveAll(folder: string, files: Record<string, Uint8Array>): Promise<string> {
+  await mkdir(folder, { recursive: true });
+  for (const [path, bytes] of Object.entries(files)) {
+    await mkdir(dirname(join(folder, path)), { recursive: true });
+    await writeFile(join(folder, path), bytes);
+  }
+  return folder;
 }

@@ -1,22 +1,14 @@
-import { mkdir, readFile, readdir, writeFile } from 'node:fs/promises';
-import { dirname, join } from 'node:path';
+import { readFile, readdir, writeFile } from 'node:fs/promises';
+import { join } from 'node:path';
 import { beforeAll, describe, expect, it } from 'vitest';
 import { checkReportSchema } from '#shared/report/check-report.ts';
 import { starterSets } from '#shared/rules/starter-sets.ts';
-import { buildCheckCommand, runCheckCommand } from '../../support/check-command.ts';
+import { buildCheckCommand, runCheckCommand, saveAll } from '../../support/check-command.ts';
 import { run, withFolder } from '../../support/outside-programs.ts';
 import { cleanPart, cleanSession, storyFrames, waveOf } from '../../support/story.ts';
 
 const part = cleanPart({ seed: 7 });
 const damaged = Buffer.from('RIFF....WAVE');
-
-async function saveAll(folder: string, files: Record<string, Uint8Array>): Promise<string> {
-  for (const [path, bytes] of Object.entries(files)) {
-    await mkdir(dirname(join(folder, path)), { recursive: true });
-    await writeFile(join(folder, path), bytes);
-  }
-  return folder;
-}
 
 beforeAll(buildCheckCommand, 120_000);
 
@@ -25,6 +17,15 @@ describe('npm run check', () => {
     const { code, stdout } = await runCheckCommand(['--help']);
     expect(code).toBe(0);
     expect(stdout).toContain('--repair safe');
+  });
+
+  it('prints the schema of its report', async () => {
+    const { code, stdout } = await runCheckCommand(['--schema']);
+    expect(code).toBe(0);
+    expect(JSON.parse(stdout)).toMatchObject({
+      $schema: 'https://json-schema.org/draft/2020-12/schema',
+      properties: { verdict: { enum: ['ready', 'look', 'must-fix'] } },
+    });
   });
 
   it.each([
