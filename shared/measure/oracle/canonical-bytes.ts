@@ -14,12 +14,13 @@ export function canonicalBytes(
   const frameBytes = sampleBytes * format.channels;
   const frames = Math.floor(data.length / frameBytes);
   const bytes = new Uint8Array(frames * sampleBytes);
+  const flip = sampleBytes === 1 && !layout.unsigned ? 0x80 : 0;
   for (let frame = 0; frame < frames; frame++) {
     const from = frame * frameBytes + channel * sampleBytes;
-    const sample = data.slice(from, from + sampleBytes);
-    if (layout.bigEndian) sample.reverse();
-    if (sampleBytes === 1 && !layout.unsigned) sample[0]! ^= 0x80;
-    bytes.set(sample, frame * sampleBytes);
+    for (let i = 0; i < sampleBytes; i++) {
+      const place = layout.bigEndian ? sampleBytes - 1 - i : i;
+      bytes[frame * sampleBytes + i] = data[from + place]! ^ flip;
+    }
   }
   return bytes;
 }

@@ -7,12 +7,15 @@ import { deepestGrid } from '../definitions.ts';
  */
 export function findGrid(samples: Float64Array, format: TrackFormat): number | null {
   const deepest = deepestGrid(format);
-  let bits = 0;
+  if (samples.every((sample) => sample === 0)) return 0;
+  let bits = 1;
+  let scale = 1;
   for (const sample of samples) {
-    if (sample === 0) continue;
-    bits = Math.max(bits, 1);
-    while (bits <= deepest && !Number.isInteger(sample * 2 ** (bits - 1))) bits++;
-    if (bits > deepest) return null;
+    while (!Number.isInteger(sample * scale)) {
+      if (bits === deepest) return null;
+      bits++;
+      scale *= 2;
+    }
   }
   return bits;
 }

@@ -4,12 +4,15 @@
  * front of the file there is silence.
  */
 export function measureTruePeak(samples: Float64Array): number {
+  const taps = interpolationPhases[0].length;
+  const padded = new Float64Array(taps - 1 + samples.length);
+  padded.set(samples, taps - 1);
   let peak = 0;
-  for (let i = 0; i < samples.length; i++) {
-    peak = Math.max(peak, Math.abs(samples[i]!));
+  for (let i = taps - 1; i < padded.length; i++) {
+    peak = Math.max(peak, Math.abs(padded[i]!));
     for (const phase of interpolationPhases) {
       let value = 0;
-      for (let tap = 0; tap < phase.length; tap++) value += phase[tap]! * (samples[i - tap] ?? 0);
+      for (let tap = 0; tap < taps; tap++) value += phase[tap]! * padded[i - tap]!;
       peak = Math.max(peak, Math.abs(value));
     }
   }
@@ -26,9 +29,4 @@ const phase1 = [
 ];
 
 /** The table of Annex 2: its third and fourth phases are the second and first backwards. */
-export const interpolationPhases = [
-  phase0,
-  phase1,
-  phase1.toReversed(),
-  phase0.toReversed(),
-] as const;
+const interpolationPhases = [phase0, phase1, phase1.toReversed(), phase0.toReversed()] as const;
