@@ -15,3 +15,8 @@ export type MeasuredFile = {
   /** For drawing; null as above. */
   overview: Overview | null;
 };
+
+/** By path, by code units, so that no language setting changes anything. */
+export function inPathOrder(files: readonly MeasuredFile[]): MeasuredFile[] {
+  return [...files].sort((a, b) => (a.path < b.path ? -1 : a.path > b.path ? 1 : 0));
+}

@@ -7,7 +7,7 @@ import { unaskedRepairs } from '#shared/repair/choose-repairs.ts';
 import type { ChosenRepair, RepairPlan } from '#shared/repair/repair-plan.ts';
 import { buildReport } from '#shared/report/build-report.ts';
 import type { HouseRules } from '#shared/rules/house-rules.ts';
-import type { MeasuredFile } from '#shared/session/measured-file.ts';
+import { inPathOrder, type MeasuredFile } from '#shared/session/measured-file.ts';
 import type { AnswerKind, SessionInformation } from '#shared/session/session-information.ts';
 import { readFolder, type HeldFolder } from '../browser/folder-handle.ts';
 import { loadMeters } from '../browser/load-meters.ts';
@@ -24,7 +24,7 @@ import { recallSong, rememberSong } from './remembered-songs.ts';
 import { sampleSong } from './sample-session/sample-song.ts';
 import { compareFileLists, isTrusted, joinFiles, joinOlder, stampOf } from './session-files.ts';
 import { verifyZip } from './verify-zip.ts';
-import { viewCheck, viewUnfinished } from './viewed-session.ts';
+import { keepUnchanged, viewCheck, viewUnfinished } from './viewed-session.ts';
 
 /** Typing should not render repaired files at every letter. */
 const typingMs = 400;
@@ -341,25 +341,35 @@ export class Bench {
       signal,
       onMeasured: (file, measured) => kept.set(stampOf(file), measured),
       onProgress: (progress) => this.set({ progress }),
-      onPreview: () => this.preview(),
+      onPreview: this.previews(signal),
     });
   }
 
   private measuredFiles(): MeasuredFile[] {
-    return this.files
-      .flatMap((file) => this.measured.get(stampOf(file)) ?? [])
-      .sort((a, b) => (a.path < b.path ? -1 : 1));
+    return inPathOrder(this.files.flatMap((file) => this.measured.get(stampOf(file)) ?? []));
   }
 
-  /** What can be said of the files that are measured, while others are still read. */
-  private preview(): void {
-    const files = this.measuredFiles();
-    const check = judgeCheck(
-      { files, comparison: emptyComparison() },
-      this.rules,
-      this.state.information,
-    );
-    this.set({ check, view: viewUnfinished(check, this.state.information, this.rules) });
+  /**
+   * Answers a function that shows what can be said of the files measured so far. Judged in the
+   * session worker, so that the page stays free; only what is new goes there.
+   */
+  private previews(signal: AbortSignal): () => Promise<void> {
+    const shown = new Set<MeasuredFile>();
+    return async () => {
+      const files = this.measuredFiles();
+      const more = files.filter((file) => !shown.has(file));
+      if (more.length === 0) return;
+      const { rules } = this;
+      const { information } = this.state;
+      const worker = await this.sessionWorker();
+      const input = { fromStart: shown.size === 0, more, rules, information };
+      for (const file of more) shown.add(file);
+      const judgement = await worker.call('preview', input, { signal });
+      if (signal.aborted || this.state.phase !== 'measuring') return;
+      const check = { files, comparison: emptyComparison(), judgement };
+      const view = viewUnfinished(check, information, rules);
+      this.set({ check, view: keepUnchanged(this.state.view, view) });
+    };
   }
 
   /** Judges at once, and works out what the chosen repairs make after a pause. */

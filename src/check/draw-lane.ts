@@ -102,6 +102,11 @@ export function drawLane(canvas: HTMLCanvasElement, drawing: LaneDrawing): void 
   }
 }
 
+/** Takes the picture away and gives its memory back. */
+export function eraseLane(canvas: HTMLCanvasElement): void {
+  if (canvas.width > 0) canvas.width = 0;
+}
+
 function covers({ startSeconds, secondsPerColumn, low }: Peaks, seconds: number): boolean {
   return seconds >= startSeconds && seconds < startSeconds + secondsPerColumn * low.length;
 }

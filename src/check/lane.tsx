@@ -2,10 +2,13 @@ import { useQuery } from '@tanstack/react-query';
 import { useEffect, useMemo, useRef } from 'react';
 import type { Overview } from '#shared/measure/overview.ts';
 import { useBenchHere } from './bench-context.ts';
-import { drawLane, overviewPeaks, type Peaks } from './draw-lane.ts';
+import { drawLane, eraseLane, overviewPeaks, type Peaks } from './draw-lane.ts';
 import { laneDetailQuery } from './lane-detail.ts';
 import type { TimeView } from './time-view.ts';
 import type { ViewedFile } from './viewed-session.ts';
+
+/** How far outside the window lanes are drawn, so that scrolling finds them drawn. */
+const drawnAround = '400px';
 
 type LaneProps = { file: ViewedFile; overview: Overview; view: TimeView };
 
@@ -29,18 +32,29 @@ export function Lane({ file, overview, view }: LaneProps) {
     );
     const draw = (): void =>
       drawLane(element, { peaks, coarse, endSeconds: frames / sampleRateHz, view, places });
-    draw();
-    const sizes = new ResizeObserver(draw);
+    // Of a thousand lanes some twenty are in view: the others hold no picture.
+    let inView = false;
+    const drawInView = (): void => (inView ? draw() : eraseLane(element));
+    const visible = new IntersectionObserver(
+      ([latest]) => {
+        inView = latest?.isIntersecting ?? false;
+        drawInView();
+      },
+      { rootMargin: drawnAround },
+    );
+    visible.observe(element);
+    const sizes = new ResizeObserver(drawInView);
     sizes.observe(element);
     // Colours are tokens, so the lane is drawn again when the theme changes.
-    const themes = new MutationObserver(draw);
+    const themes = new MutationObserver(drawInView);
     themes.observe(document.documentElement, { attributeFilter: ['data-theme'] });
     const system = matchMedia('(prefers-color-scheme: dark)');
-    system.addEventListener('change', draw);
+    system.addEventListener('change', drawInView);
     return () => {
+      visible.disconnect();
       sizes.disconnect();
       themes.disconnect();
-      system.removeEventListener('change', draw);
+      system.removeEventListener('change', drawInView);
     };
   }, [
     peaks,

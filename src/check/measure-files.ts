@@ -8,13 +8,15 @@ import type { ReadingProgress } from './bench-state.ts';
 /** How often progress and what is found so far are told, in milliseconds. */
 const progressMs = 100;
 const previewMs = 250;
+/** Large sessions take long to show: this many times as long passes before they are shown again. */
+const previewPause = 4;
 
 export type MeasureFilesOptions = {
   signal: AbortSignal;
   onMeasured: (file: FileToRead, measured: MeasuredFile) => void;
   onProgress: (progress: ReadingProgress) => void;
-  /** From time to time, when more files are measured. */
-  onPreview: () => void;
+  /** From time to time, when more files may be measured; never again before it is done. */
+  onPreview: () => Promise<void>;
 };
 
 /** Measures files in the pool; answers how many bytes they have. Throws AppError as the pool does. */
@@ -26,9 +28,17 @@ export async function measureFiles(
   const startedAt = performance.now();
   const byPath = new Map(files.map((file) => [file.path, file]));
   const current = new Map<string, number>();
-  let previewAt = 0;
+  let previewing = false;
+  let previewFrom = 0;
   let progressAt = 0;
   let bytes = 0;
+  // What is shown meanwhile must neither stop the reading nor take much of its time.
+  const preview = async (startedAt: number): Promise<void> => {
+    await onPreview().catch(() => undefined);
+    const now = performance.now();
+    previewFrom = now + Math.max(previewMs, previewPause * (now - startedAt));
+    previewing = false;
+  };
   await measureAll(
     files.map(({ path, file, size }) => ({ ...fileOnDisk(path, file), size })),
     async ({ path }, options) => {
@@ -55,9 +65,9 @@ export async function measureFiles(
           progressAt = now;
           onProgress({ ...progress, startedAt, current: new Map(current) });
         }
-        if (now - previewAt > previewMs) {
-          previewAt = now;
-          onPreview();
+        if (!previewing && now >= previewFrom) {
+          previewing = true;
+          void preview(now);
         }
       },
     },

@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import type { Finding } from '#shared/findings/finding.ts';
 import type { AnswerKind } from '#shared/session/session-information.ts';
 import type { Overview } from '#shared/measure/overview.ts';
@@ -16,18 +17,18 @@ type ReportViewProps = {
 };
 
 /** The picture and the findings beside it: on the bench, and of a stored report. */
-export function ReportView({ view, overviews, ...repairs }: ReportViewProps) {
+export const ReportView = memo(function ReportView({
+  view,
+  overviews,
+  ...repairs
+}: ReportViewProps) {
   return (
     <div className="grid grow border-t border-line lg:grid-cols-[minmax(0,1fr)_26rem]">
       <div className="bg-sheet">
         {/* The picture stays in view while the findings beside it are read. */}
         <div className="px-4 py-6 sm:px-7 lg:sticky lg:top-0 lg:max-h-[calc(100dvh-4rem)] lg:overflow-y-auto">
           <h2 className="sr-only">Side by side</h2>
-          <SideBySide
-            view={view}
-            overviews={overviews}
-            onFinding={(path, code) => showFinding(path, code)}
-          />
+          <SideBySide view={view} overviews={overviews} onFinding={showFinding} />
         </div>
       </div>
       <aside aria-label="Findings" className="border-line bg-sheet max-lg:border-t lg:border-s">
@@ -35,7 +36,7 @@ export function ReportView({ view, overviews, ...repairs }: ReportViewProps) {
       </aside>
     </div>
   );
-}
+});
 
 /** Brings a finding's text into view and the keyboard to it. */
 function showFinding(path: string, code: string): void {

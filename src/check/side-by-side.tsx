@@ -1,4 +1,4 @@
-import { useRef, type ReactNode } from 'react';
+import { memo, useRef, type ReactNode } from 'react';
 import type { Overview } from '#shared/measure/overview.ts';
 import { Button } from '../ui/button.tsx';
 import { Strip, StripRuler, StripSheet } from '../ui/strip.tsx';
@@ -89,7 +89,13 @@ type TrackStripProps = {
   onFinding: SideBySideProps['onFinding'];
 };
 
-function TrackStrip({ file, overview, view, songSeconds, onFinding }: TrackStripProps): ReactNode {
+const TrackStrip = memo(function TrackStrip({
+  file,
+  overview,
+  view,
+  songSeconds,
+  onFinding,
+}: TrackStripProps): ReactNode {
   const { path, proposedName, format } = file;
   const { frames, sampleRateHz } = format!;
   const ownName = fileName(path);
@@ -113,7 +119,7 @@ function TrackStrip({ file, overview, view, songSeconds, onFinding }: TrackStrip
       <LaneMarks file={file} view={view} onFinding={onFinding} />
     </Strip>
   );
-}
+});
 
 function barGrid({ information }: ViewedSession): BarGrid | null {
   const { tempo, metre, startBar } = information;

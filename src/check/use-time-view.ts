@@ -1,4 +1,11 @@
-import { useCallback, useEffect, useState, type KeyboardEvent, type RefObject } from 'react';
+import {
+  useCallback,
+  useEffect,
+  useMemo,
+  useState,
+  type KeyboardEvent,
+  type RefObject,
+} from 'react';
 import { panned, withinSong, zoomed, type TimeView } from './time-view.ts';
 
 const closer = 0.6;
@@ -6,10 +13,14 @@ const wider = 1 / closer;
 
 /** Zoom and pan of the picture, by wheel, keys and buttons. The lanes lie in `sheet`. */
 export function useTimeView(songSeconds: number, sheet: RefObject<HTMLElement | null>) {
-  const whole: TimeView = { startSeconds: 0, endSeconds: songSeconds };
   // Null is the whole song, however long it becomes while files are still read.
   const [chosen, setChosen] = useState<TimeView | null>(null);
-  const view = chosen ? withinSong(chosen, songSeconds) : whole;
+  // The same object as long as nothing moves, so that lanes are not drawn again for nothing.
+  const view = useMemo(
+    (): TimeView =>
+      chosen ? withinSong(chosen, songSeconds) : { startSeconds: 0, endSeconds: songSeconds },
+    [chosen, songSeconds],
+  );
 
   const change = useCallback(
     (next: (view: TimeView) => TimeView) =>

@@ -72,6 +72,35 @@ export function findingKey({
   return [code, channel ?? '', ...files].join('\n');
 }
 
+/**
+ * The newer view with every file that shows the same as before as the same object, so that only
+ * what changed is drawn again.
+ */
+export function keepUnchanged(before: ViewedSession | null, view: ViewedSession): ViewedSession {
+  if (!before) return view;
+  const known = new Map(before.files.map((file) => [file.path, file]));
+  const files = view.files.map((file) => {
+    const same = known.get(file.path);
+    return same && showsTheSame(same, file) ? same : file;
+  });
+  return { ...view, files };
+}
+
+/** A file that was not measured again has the same format object and places as before. */
+function showsTheSame(a: ViewedFile, b: ViewedFile): boolean {
+  return (
+    a.format === b.format &&
+    a.role === b.role &&
+    a.group === b.group &&
+    a.proposedName === b.proposedName &&
+    a.findings.length === b.findings.length &&
+    a.findings.every((finding, index) => {
+      const other = b.findings[index]!;
+      return finding.code === other.code && finding.level === other.level;
+    })
+  );
+}
+
 /** What one file shows whatever the others are; the rest waits until all are measured. */
 const ownCodes: ReadonlySet<FindingCode> = new Set<FindingCode>([
   ...(['unreadable', 'cut-short', 'changed-while-read', 'not-wav', 'lossy'] as const),

@@ -1,5 +1,5 @@
 import type { DroppedFile } from '#shared/bytes/byte-source.ts';
-import { openZip, type ZipListing } from '#shared/bytes/zip-source.ts';
+import { openZip, type ZipListing, type ZippedFile } from '#shared/bytes/zip-source.ts';
 import { AppError } from '#shared/errors.ts';
 import { fileOnDisk, fileSource } from '../browser/file-source.ts';
 
@@ -20,17 +20,22 @@ export function listZip(file: File): Promise<ZipListing> {
   return lastZip.listing;
 }
 
-/** The file as the core reads it. */
+/**
+ * The file as the core reads it. Once it is open, one from a zip carries the checksum that the zip
+ * claims for it.
+ */
 export function droppedFile({ path, size, file, zipPath }: FileToRead): DroppedFile {
   if (zipPath === undefined) return fileOnDisk(path, file);
-  return {
+  const zipped: DroppedFile & Partial<ZippedFile> = {
     path,
     size,
     async open() {
       const { files } = await listZip(file);
       const entry = files.find((candidate) => candidate.path === zipPath);
       if (!entry) throw new AppError('zip-refused', { reason: 'damaged-entry', entry: zipPath });
+      zipped.crc32 = entry.crc32;
       return entry.open();
     },
   };
+  return zipped;
 }

@@ -2,6 +2,7 @@ import type { RepairedSession, SessionCheck } from '#shared/check.ts';
 import type { FileToRead } from './file-to-read.ts';
 import type { Comparison } from '#shared/compare/comparison.ts';
 import type { PackageVerification } from '#shared/pack/verify-package.ts';
+import type { Judgement } from '#shared/judge/judge-session.ts';
 import type { ChosenRepair, RepairPlan } from '#shared/repair/repair-plan.ts';
 import type { CheckReport } from '#shared/report/check-report.ts';
 import type { HouseRules } from '#shared/rules/house-rules.ts';
@@ -49,6 +50,20 @@ export type SessionApi = {
     };
     progress: never;
     output: Float32Array[] | null;
+  };
+  /**
+   * Judges what is measured so far, files of their own only, in the order of their paths. Files
+   * add up from call to call until `fromStart` begins anew.
+   */
+  preview: {
+    input: {
+      fromStart: boolean;
+      more: MeasuredFile[];
+      rules: HouseRules;
+      information: SessionInformation;
+    };
+    progress: never;
+    output: Judgement;
   };
   compare: {
     input: { files: FileToRead[]; measured: MeasuredFile[] };

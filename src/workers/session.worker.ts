@@ -1,10 +1,12 @@
-import { packSession, repairSession } from '#shared/check.ts';
+import { judgeCheck, packSession, repairSession } from '#shared/check.ts';
+import { emptyComparison } from '#shared/compare/comparison.ts';
 import { createMeters } from '#shared/measure/create-meters.ts';
 import { verifyPackage } from '#shared/pack/verify-package.ts';
 import { drawTrackSheet } from '#shared/pack/track-sheet/draw-track-sheet.ts';
 import type { Package } from '#shared/pack/pack-entries.ts';
 import { droppedTracks, renderPlanned } from '#shared/repair/measure-entries.ts';
 import { rememberRenders } from '#shared/repair/remember-renders.ts';
+import { inPathOrder, type MeasuredFile } from '#shared/session/measured-file.ts';
 import { readExcerpt } from '#shared/session/read-excerpt.ts';
 import { withoutCommonFolder } from '#shared/session/common-folder.ts';
 import { isJunk } from '#shared/session/junk-files.ts';
@@ -20,6 +22,7 @@ import { sendThroughPort } from './stream-port.ts';
 
 let measureFile: MeasureFile | null = null;
 let prepared: Package | null = null;
+let previewed: MeasuredFile[] = [];
 
 const dropped = (files: FileToRead[]) => files.map(droppedFile);
 
@@ -54,6 +57,11 @@ serveWorker<SessionApi>({
     const entry = plan.entries.find(({ from }) => from.includes(path));
     const rendered = entry && (await renderPlanned(entry, droppedTracks(dropped(files), measured)));
     return rendered ? readExcerpt(rendered, startFrame, frames) : null;
+  },
+  preview({ fromStart, more, rules, information }) {
+    previewed = inPathOrder([...(fromStart ? [] : previewed), ...more]);
+    const session = { files: previewed, comparison: emptyComparison() };
+    return Promise.resolve(judgeCheck(session, rules, information).judgement);
   },
   compare({ files, measured }, { signal }) {
     return compareFiles(measured, dropped(files), signal);
