@@ -16,20 +16,42 @@ export async function findUserById(db: Queryable, userId: string) {
   return user ?? null;
 }
 
+/*
+ * Order of locks, the same in every transaction, so that no two wait for each other: links that
+ * wait for an address (by key), then the account, then its own links.
+ */
+
+/** Holds back everybody else who would make an account for the address. */
+export async function lockConfirmations(transaction: Transaction, email: string): Promise<void> {
+  await transaction
+    .select({ id: accountTokens.id })
+    .from(accountTokens)
+    .where(and(eq(accountTokens.email, email), eq(accountTokens.kind, 'confirm-account')))
+    .orderBy(asc(accountTokens.id))
+    .for('update');
+}
+
+/** Holds back every other change of the account. */
+export async function lockUser(transaction: Transaction, userId: string) {
+  const [user] = await transaction.select().from(users).where(eq(users.id, userId)).for('update');
+  return user ?? null;
+}
+
 /** Makes an account with its private project; the address must have been confirmed. */
 export async function insertUser(
   transaction: Transaction,
   user: { name: string; email: string; passwordHash: string; createdAt: Date },
 ): Promise<string> {
+  // Links that are on their way to make the same account lead nowhere from now on.
+  await lockConfirmations(transaction, user.email);
+  await transaction
+    .delete(accountTokens)
+    .where(and(eq(accountTokens.email, user.email), eq(accountTokens.kind, 'confirm-account')));
   const [row] = await transaction.insert(users).values(user).returning({ id: users.id });
   if (!row) throw new Error('no key of the new user');
   await transaction
     .insert(projects)
     .values({ kind: 'private', ownerId: row.id, title: 'My checks', createdAt: user.createdAt });
-  // Links that were on their way to make the same account lead nowhere now.
-  await transaction
-    .delete(accountTokens)
-    .where(and(eq(accountTokens.email, user.email), eq(accountTokens.kind, 'confirm-account')));
   return row.id;
 }
 
@@ -87,13 +109,13 @@ function usable(kind: TokenKind, secret: string, now: Date) {
   );
 }
 
-/** Whether a link still works. */
-export async function isTokenUsable(db: Queryable, kind: TokenKind, secret: string, now: Date) {
-  const rows = await db
-    .select({ id: accountTokens.id })
+/** What a link stands for, as long as it works. */
+export async function findToken(db: Queryable, kind: TokenKind, secret: string, now: Date) {
+  const [token] = await db
+    .select()
     .from(accountTokens)
     .where(usable(kind, secret, now));
-  return rows.length > 0;
+  return token ?? null;
 }
 
 /** Uses a link up: of several who use it at once, one gets it. Null when it does not work. */

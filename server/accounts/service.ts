@@ -26,19 +26,16 @@ export async function confirmAccount(
   { db, clock }: Services,
   { token, password }: { token: string; password: string },
 ): Promise<string> {
-  await requireUsable(db, 'confirm-account', token, clock.now());
+  const { email } = await requireUsable(db, 'confirm-account', token, clock.now());
   const passwordHash = await hashPassword(password);
   try {
     return await db.transaction(async (transaction) => {
+      await queries.lockConfirmations(transaction, email);
       const taken = await queries.takeToken(transaction, 'confirm-account', token, clock.now());
       if (!taken?.name) throw new AppError('link-expired');
-      const { name, email } = taken;
-      return queries.insertUser(transaction, {
-        name,
-        email,
-        passwordHash,
-        createdAt: clock.now(),
-      });
+      const { name } = taken;
+      const createdAt = clock.now();
+      return queries.insertUser(transaction, { name, email, passwordHash, createdAt });
     });
   } catch (error) {
     // Two links for the same address used at once: the second has nothing left to confirm.
@@ -90,9 +87,10 @@ export async function resetPassword(
   { token, password }: { token: string; password: string },
 ): Promise<string> {
   const { db, clock } = services;
-  await requireUsable(db, 'reset-password', token, clock.now());
+  const { userId } = await requireUsable(db, 'reset-password', token, clock.now());
   const passwordHash = await hashPassword(password);
   return db.transaction(async (transaction) => {
+    if (userId) await queries.lockUser(transaction, userId);
     const taken = await queries.takeToken(transaction, 'reset-password', token, clock.now());
     if (!taken?.userId) throw new AppError('link-expired');
     await replacePassword(services, transaction, taken.userId, passwordHash);
@@ -148,12 +146,12 @@ export async function confirmAddressChange(
   { token }: { token: string },
 ): Promise<{ userId: string; email: string }> {
   try {
+    const { userId } = await requireUsable(db, 'change-address', token, clock.now());
     return await db.transaction(async (transaction) => {
+      const before = userId && (await queries.lockUser(transaction, userId));
       const taken = await queries.takeToken(transaction, 'change-address', token, clock.now());
-      if (!taken?.userId) throw new AppError('link-expired');
-      const { userId, email } = taken;
-      const before = await queries.findUserById(transaction, userId);
-      if (!before) throw new AppError('link-expired');
+      if (!before || !taken) throw new AppError('link-expired');
+      const { email } = taken;
       await queries.updateEmail(transaction, userId, email);
       // A reset link that waits in the old mailbox must not open the account any more.
       await queries.deleteTokensOf(transaction, userId, 'reset-password');
@@ -172,9 +170,11 @@ export async function confirmAddressChange(
   }
 }
 
-async function requireUsable(...args: Parameters<typeof queries.isTokenUsable>): Promise<void> {
-  // Before the costly hash of a password: a dead link must be cheap to answer.
-  if (!(await queries.isTokenUsable(...args))) throw new AppError('link-expired');
+/** Before the costly hash of a password: a dead link must be cheap to answer. */
+async function requireUsable(...link: Parameters<typeof queries.findToken>) {
+  const token = await queries.findToken(...link);
+  if (!token) throw new AppError('link-expired');
+  return token;
 }
 
 async function replacePassword(

@@ -6,8 +6,11 @@ import { DrizzleQueryError } from 'drizzle-orm/errors';
  * database, idle session.
  */
 const lostSqlStates = /^(08...|57P0[1-5])$/;
-/** The same for one that has too much to do: 53300 connections, 57014 cut off at its time limit. */
-const busySqlStates = /^(53300|57014)$/;
+/**
+ * The same for one that has too much to do: 53300 connections, 57014 cut off at its time limit,
+ * 40001 and 40P01 rolled back because of others.
+ */
+const busySqlStates = /^(53300|57014|40001|40P01)$/;
 
 /** Codes of the driver and of Node.js for a connection that cannot be made or was lost. */
 const awayCodes = new Set([

@@ -9,6 +9,14 @@ beforeAll(async () => {
 });
 afterAll(() => server.close());
 
+/** The secrets of all links that were mailed to an address. */
+function secretsMailedTo(email: string): string[] {
+  return server.catcher
+    .mails()
+    .filter(({ to }) => to.includes(email))
+    .flatMap(({ text }) => /#token=(\S+)/.exec(text)?.[1] ?? []);
+}
+
 describe('register and confirm', () => {
   it('answers the same for a new and a known address and mails what fits', async () => {
     await signUp(server, 'Ada Known', 'known@people.example');
@@ -71,10 +79,7 @@ describe('register and confirm', () => {
       two.get(accounts.register, { body: { name: 'Second', email } }),
     ]);
     await server.runJobs();
-    const tokens = server.catcher
-      .mails()
-      .filter(({ to }) => to.includes(email))
-      .map(({ text }) => /#token=(\S+)/.exec(text)?.[1] ?? '');
+    const tokens = secretsMailedTo(email);
     expect(new Set(tokens).size).toBe(2);
     const answers = await Promise.all(
       tokens.map((token, index) =>
@@ -84,6 +89,33 @@ describe('register and confirm', () => {
       ),
     );
     expect(answers.map(({ status }) => status).sort()).toEqual([200, 410]);
+  });
+
+  it('lets one of several links win when they are used at once, round after round', async () => {
+    for (let round = 0; round < 6; round += 1) {
+      const email = `crowd-${round}@people.example`;
+      const browser = openBrowser(server);
+      const useAtOnce = async (
+        endpoint: typeof accounts.confirmAccount | typeof accounts.resetPassword,
+      ) => {
+        await server.runJobs();
+        const answers = await Promise.all(
+          secretsMailedTo(email).map((token) =>
+            openBrowser(server).call(endpoint, { body: { token, password: testPassword } }),
+          ),
+        );
+        return answers.map(({ status }) => status).sort();
+      };
+      for (let turn = 0; turn < 2; turn += 1) {
+        await browser.get(accounts.register, { body: { name: 'Crowd', email } });
+      }
+      expect(await useAtOnce(accounts.confirmAccount)).toEqual([200, 410]);
+      for (let turn = 0; turn < 3; turn += 1) {
+        await browser.get(accounts.requestPasswordReset, { body: { email } });
+      }
+      // The two used-up links of the registration are among these.
+      expect(await useAtOnce(accounts.resetPassword)).toEqual([200, 410, 410, 410, 410]);
+    }
   });
 
   it('refuses a password that is too short, too long or repeats a handful of characters', async () => {
