@@ -1,4 +1,4 @@
-import { useEffect, useMemo, useState, useSyncExternalStore } from 'react';
+import { useEffect, useMemo, useState, useSyncExternalStore, type ReactNode } from 'react';
 import type { Edition } from '#shared/api/rules.ts';
 import type { Overview } from '#shared/measure/overview.ts';
 import { safeRepairs } from '#shared/repair/choose-repairs.ts';
@@ -8,12 +8,16 @@ import { ErrorPanel } from '../app/error-panel.tsx';
 import { Page } from '../app/shell.tsx';
 import { Button } from '../ui/button.tsx';
 import { PageHeader } from '../ui/page-header.tsx';
+import type { HeldFolder } from '../browser/folder-handle.ts';
 import { BenchContext } from './bench-context.ts';
 import { Bench } from './bench.ts';
 import type { BenchState } from './bench-state.ts';
+import { checkRulesWords, readRulesFile, rulesFileAlone, type CheckRules } from './check-rules.ts';
 import { Intake, Pickers, usePageDrop } from './intake.tsx';
 import { ExportedAgain } from './exported-again.tsx';
 import { IntakeProblems } from './intake-problems.tsx';
+import { OtherRules } from './other-rules.tsx';
+import { RulesMistakes } from './rules-mistakes.tsx';
 import { ReadingProgressBar } from './reading-progress.tsx';
 import { ReportHeader } from './report-header.tsx';
 import { ReportView } from './report-view.tsx';
@@ -25,45 +29,55 @@ import { StoreReport } from './store-report-button.tsx';
 import { allFindings, type ViewedSession } from './viewed-session.ts';
 
 type BenchScreenProps = {
-  rules: HouseRules;
-  /** The published edition the rules are; null for the default rules. */
-  edition: Edition | null;
+  rules: CheckRules;
   /** Where the report belongs; null: the person's own project. */
   projectId: string | null;
+  /** Rules from a file; null goes back to those of the page's address. */
+  onRules: (rules: CheckRules | null) => void;
 };
 
 /** The bench against one set of rules: from the empty sheet to the saved zip. */
-export function BenchScreen({ rules, edition, projectId }: BenchScreenProps) {
-  const bench = useBench(rules);
+export function BenchScreen({ rules, projectId, onRules }: BenchScreenProps) {
+  const bench = useBench(rules.rules);
   const state = useSyncExternalStore(bench.subscribe, bench.getState);
+  // A project is held to its edition.
+  const rulesLine =
+    projectId !== null && rules.edition ? (
+      `Against ${checkRulesWords(rules)}.`
+    ) : (
+      <OtherRules current={rules} onRules={onRules} />
+    );
   if (state.phase !== 'waiting' && state.view) {
     return (
       <BusyBench
         bench={bench}
         state={state}
         view={state.view}
-        edition={edition}
+        edition={rules.edition}
         projectId={projectId}
+        rulesLine={rulesLine}
       />
     );
   }
+  const takeRules = (chosen: CheckRules): void => {
+    bench.fail(null);
+    onRules(chosen);
+  };
+  const takeIn = (folder: HeldFolder): void => {
+    const file = rulesFileAlone(folder);
+    if (file) readRulesFile(file).then(takeRules, bench.fail);
+    else bench.drop(folder);
+  };
   return (
     <Page>
-      <PageHeader
-        title="Check a folder"
-        meta={
-          edition
-            ? `Against the house rules of ${edition.studio.name}, edition ${String(edition.number)}.`
-            : 'Against the default rules: what every engineer wants to know before a mix.'
-        }
-      />
+      <PageHeader title="Check a folder" meta={rulesLine} />
       {state.failure !== null && (
         <div className="mb-6">
-          <ErrorPanel error={state.failure} />
+          <RulesMistakes failure={state.failure} />
         </div>
       )}
       {state.phase === 'waiting' ? (
-        <Intake onFolder={bench.drop} onFailure={bench.fail} onSample={bench.dropSample}>
+        <Intake onFolder={takeIn} onFailure={bench.fail} onSample={bench.dropSample}>
           <SongFields information={state.information} onChange={bench.setInformation} />
         </Intake>
       ) : (
@@ -76,19 +90,23 @@ export function BenchScreen({ rules, edition, projectId }: BenchScreenProps) {
 }
 
 function useBench(rules: HouseRules): Bench {
-  const bench = useMemo(() => new Bench(rules), [rules]);
+  const [bench] = useState(() => new Bench(rules));
+  useEffect(() => bench.setRules(rules), [bench, rules]);
   useEffect(() => () => bench.close(), [bench]);
   return bench;
 }
 
-type BusyBenchProps = Omit<BenchScreenProps, 'rules'> & {
+type BusyBenchProps = {
   bench: Bench;
   state: BenchState;
   view: ViewedSession;
+  edition: Edition | null;
+  projectId: string | null;
+  rulesLine: ReactNode;
 };
 
 /** Something is on the bench: being read, or checked. */
-function BusyBench({ bench, state, view, edition, projectId }: BusyBenchProps) {
+function BusyBench({ bench, state, view, edition, projectId, rulesLine }: BusyBenchProps) {
   usePageDrop(bench.drop, bench.fail);
   const [fieldsShown, setFieldsShown] = useState(false);
   const overviews = useMemo(() => overviewsOf(state.check), [state.check]);
@@ -108,6 +126,7 @@ function BusyBench({ bench, state, view, edition, projectId }: BusyBenchProps) {
           </Button>
         )}
       </ReportHeader>
+      <p className="px-4 pb-4 text-small text-ink-2 sm:px-7">{rulesLine}</p>
       {fieldsShown && (
         <div className="px-4 pb-6 sm:px-7">
           <SongDetails

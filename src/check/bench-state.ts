@@ -1,4 +1,5 @@
 import type { RepairedSession, SessionCheck } from '#shared/check.ts';
+import type { Comparison } from '#shared/compare/comparison.ts';
 import type { Finding } from '#shared/findings/finding.ts';
 import type { PackageVerification } from '#shared/pack/verify-package.ts';
 import type { ChosenRepair } from '#shared/repair/repair-plan.ts';
@@ -7,6 +8,8 @@ import {
   emptySessionInformation,
   type SessionInformation,
 } from '#shared/session/session-information.ts';
+import type { MeasuredFile } from '#shared/session/measured-file.ts';
+import type { FileToRead } from '../workers/file-to-read.ts';
 import type { ReadAgain } from './session-files.ts';
 import type { ViewedSession } from './viewed-session.ts';
 
@@ -73,6 +76,14 @@ export const waitingBench: BenchState = {
   repaired: null,
   report: null,
   failure: null,
+};
+
+/** A finished check, as it was before the files are read again. */
+export type CheckedBench = {
+  state: BenchState;
+  files: FileToRead[];
+  measured: Map<string, MeasuredFile>;
+  comparison: Comparison;
 };
 
 /** Every finding of a check, whatever it is about. */

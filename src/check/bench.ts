@@ -10,14 +10,13 @@ import type { HouseRules } from '#shared/rules/house-rules.ts';
 import { inPathOrder, type MeasuredFile } from '#shared/session/measured-file.ts';
 import type { AnswerKind, SessionInformation } from '#shared/session/session-information.ts';
 import { readFolder, type HeldFolder } from '../browser/folder-handle.ts';
-import { loadMeters } from '../browser/load-meters.ts';
 import type { FileToRead } from '../workers/file-to-read.ts';
-import { createMeasurePool, type MeasurePool } from '../workers/measure-pool.ts';
 import { makeSampleFiles } from '../workers/sample-link.ts';
-import { openSessionWorker, type SessionWorker } from '../workers/session-link.ts';
+import type { SessionWorker } from '../workers/session-link.ts';
 import { answered, answersStillAsked, repairsStillOpen } from './answers.ts';
-import { judgedFindings, waitingBench, type BenchState } from './bench-state.ts';
+import { judgedFindings, waitingBench, type BenchState, type CheckedBench } from './bench-state.ts';
 import type { ExcerptPlace } from './excerpts.ts';
+import { BenchWorkers } from './bench-workers.ts';
 import { isCopyOf, listIntake, zipAlone } from './intake-list.ts';
 import { measureFiles } from './measure-files.ts';
 import { recallSong, rememberSong } from './remembered-songs.ts';
@@ -36,7 +35,7 @@ const typingMs = 400;
 export class Bench {
   private state: BenchState = waitingBench;
   private readonly listeners = new Set<() => void>();
-  readonly rules: HouseRules;
+  rules: HouseRules;
   private files: FileToRead[] = [];
   /** The folder on the bench, where the browser lets it be read again. */
   private held: FileSystemDirectoryHandle | null = null;
@@ -45,16 +44,14 @@ export class Bench {
   /** The name of the zip that was downloaded last. */
   private handedOver: string | null = null;
   /** What a second reading that is stopped goes back to. */
-  private before: Checked | null = null;
+  private before: CheckedBench | null = null;
   /** What was measured, by the file's stamp: a file that did not change is not read again. */
   private measured = new Map<string, MeasuredFile>();
   private comparison: Comparison | null = null;
   private running: AbortController | null = null;
   private repairing: AbortController | null = null;
   private repairTimer: ReturnType<typeof setTimeout> | undefined;
-  private module: Promise<WebAssembly.Module> | null = null;
-  private pool: MeasurePool | null = null;
-  private worker: Promise<SessionWorker> | null = null;
+  private readonly workers = new BenchWorkers();
 
   constructor(rules: HouseRules) {
     this.rules = rules;
@@ -144,6 +141,13 @@ export class Bench {
     if (this.state.phase === 'checked') this.judge(typingMs);
   };
 
+  /** Other rules: what is measured stays, only the findings are worked out anew. */
+  readonly setRules = (rules: HouseRules): void => {
+    if (rules === this.rules) return;
+    this.rules = rules;
+    this.judge(0);
+  };
+
   /** What the artist says about a finding; null takes it back. */
   readonly answer = (finding: Finding, answer: AnswerKind | null): void => {
     this.setInformation({ answers: answered(this.state.information.answers, finding, answer) });
@@ -190,25 +194,13 @@ export class Bench {
     return worker.call('prepare', { files: this.files, check, repaired, report });
   };
 
-  readonly sessionWorker = async (): Promise<SessionWorker> => {
-    const before = this.worker;
-    if (before && (await before.then(({ isAlive }) => isAlive).catch(() => false))) return before;
-    // Somebody else may have seen the same worker gone and started the next one meanwhile.
-    if (this.worker === before) this.worker = this.meters().then(openSessionWorker);
-    return this.worker!;
-  };
+  readonly sessionWorker = (): Promise<SessionWorker> => this.workers.session();
 
   close(): void {
     this.running?.abort();
     this.repairing?.abort();
     clearTimeout(this.repairTimer);
-    this.pool?.close();
-    void this.worker?.then(
-      (worker) => worker.close(),
-      () => undefined,
-    );
-    this.pool = null;
-    this.worker = null;
+    this.workers.close();
   }
 
   private set(change: Partial<BenchState>): void {
@@ -219,15 +211,6 @@ export class Bench {
     for (const listener of this.listeners) listener();
   }
 
-  private meters(): Promise<WebAssembly.Module> {
-    // Without a network it fails and may work a moment later.
-    this.module ??= loadMeters().catch((cause: unknown) => {
-      this.module = null;
-      throw cause;
-    });
-    return this.module;
-  }
-
   private clear(): void {
     this.files = [];
     this.loose = [];
@@ -235,7 +218,7 @@ export class Bench {
     this.set({ ...waitingBench, information: this.state.information });
   }
 
-  private restore({ state, files, measured, comparison }: Checked): void {
+  private restore({ state, files, measured, comparison }: CheckedBench): void {
     this.files = files;
     this.measured = measured;
     this.comparison = comparison;
@@ -336,8 +319,7 @@ export class Bench {
     );
     this.measured = kept;
     const waiting = files.filter((file) => !kept.has(stampOf(file)));
-    const pool = (this.pool ??= createMeasurePool(() => this.meters()));
-    return measureFiles(waiting, pool, {
+    return measureFiles(waiting, this.workers.measuring(), {
       signal,
       onMeasured: (file, measured) => kept.set(stampOf(file), measured),
       onProgress: (progress) => this.set({ progress }),
@@ -413,14 +395,6 @@ export class Bench {
     }
   }
 }
-
-/** A finished check, as it was before the files are read again. */
-type Checked = {
-  state: BenchState;
-  files: FileToRead[];
-  measured: Map<string, MeasuredFile>;
-  comparison: Comparison;
-};
 
 /** What a reading under way has not said yet. */
 const unread = { reading: null, repaired: null, report: null, readAgain: null } as const;
