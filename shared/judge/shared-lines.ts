@@ -17,7 +17,8 @@ const leastShare: Partial<Record<FindingCode, number>> = {
 
 /**
  * One line where at least half of the files share a finding. Lines of different level or answer
- * stay apart. `byFile` has the findings of each file; `filesInSession` is how many could have it.
+ * stay apart, and so do lines with different repairs on offer, because what is done about them
+ * differs. `byFile` has the findings of each file; `filesInSession` is how many could have it.
  */
 export function shareLines(
   byFile: readonly (readonly Finding[])[],
@@ -35,7 +36,7 @@ export function shareLines(
   const lines = new Map<string, Finding[]>();
   for (const finding of byFile.flat()) {
     if (!isShared(finding)) continue;
-    const key = `${finding.code} ${finding.level} ${finding.answer ?? ''}`;
+    const key = [finding.code, finding.level, finding.answer, ...finding.repairs].join(' ');
     lines.set(key, [...(lines.get(key) ?? []), finding]);
   }
   const together = [...lines.values()];
@@ -61,9 +62,6 @@ function oneLine(findings: readonly Finding[]): Finding {
     places: findings.reduce((sum, { places }) => sum + places, 0),
     ranges: [],
     args: worst.args,
-    repairs: first.repairs.filter((repair) =>
-      findings.every(({ repairs }) => repairs.includes(repair)),
-    ),
     perFile: findings.map(({ files, channel, places, ranges, args }) => ({
       path: files[0] ?? '',
       channel,

@@ -63,20 +63,20 @@ describe('one line for many files', () => {
     ]);
   });
 
-  it('offers only the repairs that all of them have', () => {
-    const short = { frames: 8_000_000 };
-    const lines = judgeCase({
+  it('keeps apart what can be repaired and what cannot', () => {
+    const file = (path: string, frames: number) => measuredFile({ path, format: { frames } });
+    const judgement = judgeCase({
       instead: goodTracks(),
       add: [
-        ...[1, 2, 3, 4].map((number) =>
-          measuredFile({ path: `Backing Vocal ${number}.wav`, format: short }),
-        ),
-        measuredFile({ path: 'Violin.wav', format: { frames: 9_000_000 } }),
+        ...[1, 2, 3, 4].map((number) => file(`Backing Vocal ${number}.wav`, 8_000_000)),
+        file('Vocal Reverb.wav', 9_000_000),
       ],
-    }).session.findings;
-    expect(lines).toMatchObject([
+    });
+    expect(judgement.session.findings).toMatchObject([
       { code: 'length-differs', level: 'note', repairs: ['add-silence'] },
     ]);
+    expect(judgement.session.findings[0]?.files).toHaveLength(4);
+    expect(judgement.files.at(-1)?.findings).toMatchObject([{ level: 'note', repairs: [] }]);
   });
 
   it('keeps a few places of each file, and says how many there are', () => {
