@@ -34,7 +34,10 @@ export function Lane({ file, overview, view }: LaneProps) {
       drawLane(element, { peaks, coarse, endSeconds: frames / sampleRateHz, view, places });
     // Of a thousand lanes some twenty are in view: the others hold no picture.
     let inView = false;
-    const drawInView = (): void => (inView ? draw() : eraseLane(element));
+    const drawInView = (): void =>
+      inView || matchMedia('print').matches ? draw() : eraseLane(element);
+    // On paper everything is in view.
+    addEventListener('beforeprint', draw);
     const visible = new IntersectionObserver(
       ([latest]) => {
         inView = latest?.isIntersecting ?? false;
@@ -51,6 +54,7 @@ export function Lane({ file, overview, view }: LaneProps) {
     const system = matchMedia('(prefers-color-scheme: dark)');
     system.addEventListener('change', drawInView);
     return () => {
+      removeEventListener('beforeprint', draw);
       visible.disconnect();
       sizes.disconnect();
       themes.disconnect();
