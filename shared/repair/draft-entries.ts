@@ -1,5 +1,7 @@
 import { apart } from '../findings/shared-line.ts';
-import type { Finding } from '../findings/finding.ts';
+import type { Finding, RepairKind } from '../findings/finding.ts';
+import { operationsFor, type Repair } from './operations-for.ts';
+import { inOrder } from './order-operations.ts';
 import type { ChosenRepair, Operation } from './repair-plan.ts';
 import type { TrackFormat } from '../wave/track-format.ts';
 
@@ -23,26 +25,6 @@ export type Drafts = {
   leftOut: { path: string; reason: 'chosen' | 'duplicate' }[];
 };
 
-/** Length of a fade at the start or end of a file, and of one across an edit: 2 ms to each side. */
-const edgeFadeMs = 3;
-const crossFadeMs = 4;
-
-/** Far below hearing, yet an offset is gone within a fifth of a second. */
-const highPassHz = 5;
-
-/** Room for dither and rounding under the peak a gain aims at, dB. */
-const gainStepDb = 0.1;
-
-const operationOrder: readonly Operation['kind'][] = [
-  'take-channel',
-  'join',
-  'high-pass',
-  'gain',
-  'fade',
-  'move',
-  'pad',
-];
-
 /**
  * What the chosen repairs make of the tracks. A choice whose finding is no longer there changes
  * nothing: whoever chose it has the repair already.
@@ -57,32 +39,33 @@ export function draftEntries(
       .flatMap(apart)
       .flatMap((finding) => (answers(choice, finding) ? [{ choice, finding }] : [])),
   );
-  const leftOut = repairs
-    .filter(({ choice }) => choice.repair === 'leave-out')
-    .flatMap(({ choice, finding }) => leaveOut(choice, finding));
-  const gone = new Set(leftOut.map(({ path }) => path));
+  const leftOut = new Map(
+    repairs
+      .filter(({ choice }) => choice.repair === 'leave-out')
+      .flatMap(({ choice, finding }) => leaveOut(choice, finding)),
+  );
   const staying = new Map(
-    tracks.filter(({ path }) => !gone.has(path)).map((track) => [track.path, track]),
+    tracks.filter(({ path }) => !leftOut.has(path)).map((track) => [track.path, track]),
   );
 
-  const joins = repairs
-    .filter(({ choice }) => choice.repair === 'join')
-    .map(({ finding }) => sidesOf(finding))
-    .filter((sides) => canJoin(sides, staying));
-  const joined = new Map(joins.flatMap((sides) => sides.map((side) => [side, sides] as const)));
+  const joined = new Map<string, string[]>();
+  for (const { choice, finding } of repairs) {
+    const sides = sidesOf(finding);
+    if (choice.repair !== 'join' || !canJoin(sides, staying)) continue;
+    // A file can be one side of one pair only.
+    if (sides.some((path) => joined.has(path))) continue;
+    for (const side of sides) joined.set(side, sides);
+  }
 
   const drafts: Draft[] = [];
   for (const track of staying.values()) {
     const sides = joined.get(track.path);
     if (sides && sides[0] !== track.path) continue;
-    const from = sides ?? [track.path];
-    const mine = repairs.filter(({ finding }) => finding.files.some((path) => from.includes(path)));
-    drafts.push(...draftTrack(track, from, mine));
+    const sources = (sides ?? [track.path]).map((path) => staying.get(path)!);
+    drafts.push(...draftTrack(sources, repairs));
   }
-  return { drafts, leftOut };
+  return { drafts, leftOut: [...leftOut].map(([path, reason]) => ({ path, reason })) };
 }
-
-type Repair = { choice: ChosenRepair; finding: Finding };
 
 /** A choice names the files of one finding, or of many of the same code at once. */
 function answers(choice: ChosenRepair, finding: Finding): boolean {
@@ -97,11 +80,14 @@ function answers(choice: ChosenRepair, finding: Finding): boolean {
 }
 
 /** The files that were named; of files that are the same, the first stays if all were named. */
-function leaveOut(choice: ChosenRepair, { code, files }: Finding): Drafts['leftOut'] {
+function leaveOut(
+  choice: ChosenRepair,
+  { code, files }: Finding,
+): [string, Drafts['leftOut'][number]['reason']][] {
   const named = files.filter((path) => choice.files.includes(path));
   const going = named.length > 1 && named.length === files.length ? named.slice(1) : named;
   const reason = code === 'same-audio' ? 'duplicate' : 'chosen';
-  return going.map((path) => ({ path, reason }));
+  return going.map((path) => [path, reason]);
 }
 
 function sidesOf(finding: Finding): string[] {
@@ -125,124 +111,49 @@ function canJoin(sides: string[], tracks: ReadonlyMap<string, DraftedTrack>): bo
   );
 }
 
-function draftTrack(track: DraftedTrack, from: string[], repairs: readonly Repair[]): Draft[] {
-  const operations = repairs.flatMap((repair) => operationsFor(repair, track));
-  if (from.length === 2) operations.push({ kind: 'join' });
-  const isMono = operations.some(({ kind }) => kind === 'take-channel');
-  const draft: Draft = {
-    from,
-    operations: inOrder(operations, track.format.frames),
-    channels: from.length === 2 ? 2 : isMono ? 1 : track.format.channels,
-    rewriteAsWav: repairs.some(({ choice }) => choice.repair === 'rewrite-container'),
-    rename: repairs.some(({ choice }) => choice.repair === 'rename' || choice.repair === 'join'),
-    channelLabel: '',
+/** Drafts of one track, or of a left and a right one. */
+function draftTrack(sources: readonly DraftedTrack[], repairs: readonly Repair[]): Draft[] {
+  const track = sources[0]!;
+  const mine = repairs.filter(({ finding }) =>
+    sources.some(({ path }) => finding.files.includes(path)),
+  );
+  const isJoin = sources.length === 2;
+  const takes = (repair: RepairKind) => mine.some(({ choice }) => choice.repair === repair);
+  const operations = sources.flatMap((source, side) =>
+    repairs
+      .filter(({ finding }) => finding.files.includes(source.path))
+      .flatMap((repair) => operationsFor(repair, source.format))
+      .map((operation) => (isJoin ? onChannel(operation, side) : operation)),
+  );
+  const frames = Math.max(...sources.map(({ format }) => format.frames));
+  const draft = {
+    from: sources.map(({ path }) => path),
+    rewriteAsWav: takes('rewrite-container'),
+    rename: takes('rename') || isJoin,
   };
-  if (!repairs.some(({ choice }) => choice.repair === 'split') || track.format.channels < 2) {
-    return [draft];
+  if (takes('split') && track.format.channels > 1) {
+    return channelLabels(track).map((channelLabel, channel) => ({
+      ...draft,
+      operations: inOrder([{ kind: 'take-channel', channel }, ...operations], frames),
+      channels: 1,
+      channelLabel,
+    }));
   }
-  return channelLabels(track).map((channelLabel, channel) => ({
-    ...draft,
-    operations: [{ kind: 'take-channel', channel }, ...draft.operations],
-    channels: 1,
-    channelLabel,
-  }));
+  const all: Operation[] = isJoin ? [{ kind: 'join' }, ...operations] : operations;
+  const isMono = all.some(({ kind }) => kind === 'take-channel');
+  return [
+    {
+      ...draft,
+      operations: inOrder(all, frames),
+      channels: isJoin ? 2 : isMono ? 1 : track.format.channels,
+      channelLabel: '',
+    },
+  ];
 }
 
-function operationsFor({ choice, finding }: Repair, { format }: DraftedTrack): Operation[] {
-  const { args } = finding;
-  switch (choice.repair) {
-    case 'keep-one-side': {
-      const { silentSide, gainDb } = args;
-      const right = silentSide === 'left' || (typeof gainDb === 'number' && gainDb > 0);
-      return [{ kind: 'take-channel', channel: choice.channel ?? (right ? 1 : 0) }];
-    }
-    case 'add-silence': {
-      const difference = args['differenceFrames'];
-      return typeof difference === 'number' && difference < 0
-        ? [{ kind: 'pad', toFrames: format.frames - difference }]
-        : [];
-    }
-    case 'move': {
-      const byFrames = choice.byFrames ?? args['differenceFrames'];
-      return typeof byFrames === 'number' && byFrames !== 0 ? [{ kind: 'move', byFrames }] : [];
-    }
-    case 'gain': {
-      const gainDb = choice.gainDb ?? gainUnderCeiling(finding);
-      return gainDb === 0 ? [] : [{ kind: 'gain', gainDb }];
-    }
-    case 'high-pass':
-      return [{ kind: 'high-pass', cutoffHz: highPassHz }];
-    case 'fade':
-      return fades(choice, finding, format);
-    case 'rename':
-    case 'rewrite-container':
-    case 'split':
-    case 'join':
-    case 'leave-out':
-      return [];
-  }
-}
-
-/** Down to the ceiling of the rule, or to 1 dB under full scale where the rule names none. */
-function gainUnderCeiling({ args }: Finding): number {
-  const { peakDbfs, ceilingDbfs } = args;
-  if (typeof peakDbfs !== 'number') return 0;
-  const target = typeof ceilingDbfs === 'number' ? ceilingDbfs : -1;
-  return Math.floor((target - peakDbfs) / gainStepDb) * gainStepDb;
-}
-
-function fades(choice: ChosenRepair, finding: Finding, { frames, sampleRateHz }: TrackFormat) {
-  const long = (ms: number) => Math.min(frames, Math.round((ms / 1000) * sampleRateHz));
-  const window = (
-    shape: 'in' | 'out' | 'cross',
-    startFrame: number,
-    endFrame: number,
-  ): Operation => ({
-    kind: 'fade',
-    shape,
-    startFrame: Math.max(0, startFrame),
-    endFrame: Math.min(frames, endFrame),
-    channel: finding.channel,
-  });
-  if (finding.code === 'starts-on-sound') return [window('in', 0, long(edgeFadeMs))];
-  if (finding.code === 'ends-on-sound') return [window('out', frames - long(edgeFadeMs), frames)];
-  const half = long(crossFadeMs / 2);
-  const places =
-    choice.startFrame === undefined
-      ? finding.ranges
-      : finding.ranges.filter(({ startFrame }) => startFrame === choice.startFrame);
-  return places.map(({ startFrame }) => window('cross', startFrame - half, startFrame + half));
-}
-
-/** One operation of a kind (fades: any number that do not overlap), in the order of rendering. */
-function inOrder(operations: readonly Operation[], frames: number): Operation[] {
-  const kept: Operation[] = [];
-  for (const operation of operations) {
-    const clash = kept.findIndex((other) => excludes(other, operation));
-    if (clash < 0) kept.push(operation);
-    else if (operation.kind === 'gain') kept[clash] = quieter(kept[clash]!, operation);
-  }
-  return kept
-    .map((operation) => padded(operation, kept, frames))
-    .sort((a, b) => operationOrder.indexOf(a.kind) - operationOrder.indexOf(b.kind));
-}
-
-function excludes(a: Operation, b: Operation): boolean {
-  if (a.kind !== 'fade' || b.kind !== 'fade') return a.kind === b.kind;
-  const sameChannel = a.channel === null || b.channel === null || a.channel === b.channel;
-  return sameChannel && a.startFrame < b.endFrame && b.startFrame < a.endFrame;
-}
-
-function quieter(a: Operation, b: Operation): Operation {
-  return a.kind === 'gain' && b.kind === 'gain' && b.gainDb > a.gainDb ? a : b;
-}
-
-/** A moved file has its silence in front already counted in the length it is padded to. */
-function padded(operation: Operation, all: readonly Operation[], frames: number): Operation {
-  if (operation.kind !== 'pad') return operation;
-  const moved = all.find((other) => other.kind === 'move')?.byFrames ?? 0;
-  return { kind: 'pad', toFrames: Math.max(operation.toFrames, frames + moved) };
-}
+/** A fade in a mono file that becomes one side of a stereo file. */
+const onChannel = (operation: Operation, channel: number): Operation =>
+  operation.kind === 'fade' ? { ...operation, channel } : operation;
 
 /** Speaker positions of WAVE_FORMAT_EXTENSIBLE, in the order of their bits (mmreg.h). */
 const speakers = ['L', 'R', 'C', 'LFE', 'Ls', 'Rs'] as const;

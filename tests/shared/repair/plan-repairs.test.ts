@@ -193,6 +193,70 @@ describe('choices', () => {
   });
 });
 
+describe('fades', () => {
+  const fade = (channel: number | null, path = 'a.wav') =>
+    findingOf({ code: 'starts-on-sound', files: [path], repairs: ['fade'], channel });
+  const faded = { kind: 'fade', shape: 'in', startFrame: 0, endFrame: 144 };
+
+  it('follow the side that is kept, and are dropped with the other', async () => {
+    const track = await draftedTrack('a.wav', waveOf([part, part]));
+    const keep = findingOf({
+      code: 'one-side-silent',
+      files: ['a.wav'],
+      repairs: ['keep-one-side'],
+      args: { silentSide: 'left' },
+    });
+    const operations = (channel: number) => {
+      const findings = [fade(channel), keep];
+      const chosen = findings.map((finding) => chooseRepair(finding, finding.repairs[0]!));
+      return draftEntries([track], findings, chosen).drafts[0]?.operations;
+    };
+    const take = { kind: 'take-channel', channel: 1 };
+    expect(operations(1)).toEqual([take, { ...faded, channel: null }]);
+    expect(operations(0)).toEqual([take]);
+  });
+
+  it('stay on their own side of what is joined', async () => {
+    const track = await draftedTrack('a L.wav', short);
+    const tracks = [track, { ...track, path: 'a R.wav' }];
+    const findings = [
+      fade(0, 'a R.wav'),
+      findingOf({
+        code: 'split-stereo',
+        files: ['a L.wav', 'a R.wav'],
+        repairs: ['join'],
+        args: { left: 'a L.wav', right: 'a R.wav' },
+      }),
+    ];
+    const chosen = findings.map((finding) => chooseRepair(finding, finding.repairs[0]!));
+    expect(draftEntries(tracks, findings, chosen).drafts).toMatchObject([
+      {
+        from: ['a L.wav', 'a R.wav'],
+        channels: 2,
+        operations: [{ kind: 'join' }, { ...faded, channel: 1 }],
+      },
+    ]);
+  });
+
+  it('across an edit are as long on both sides of it', async () => {
+    const track = await draftedTrack('a.wav', short);
+    const range = (startFrame: number) => ({
+      ...{ startFrame, endFrame: startFrame + 1, confidence: 'sure' as const },
+    });
+    const edits = findingOf({
+      code: 'dropout',
+      files: ['a.wav'],
+      repairs: ['fade'],
+      ranges: [range(40), range(5000)],
+    });
+    const { drafts } = draftEntries([track], [edits], [chooseRepair(edits, 'fade')]);
+    expect(drafts[0]?.operations).toMatchObject([
+      { shape: 'cross', startFrame: 0, endFrame: 80 },
+      { shape: 'cross', startFrame: 4904, endFrame: 5096 },
+    ]);
+  });
+});
+
 describe('a split file', () => {
   it.each([
     [0x3f, 6, ['L', 'R', 'C', 'LFE', 'Ls', 'Rs']],

@@ -1,6 +1,8 @@
+import { truncate } from 'node:fs/promises';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { Operation } from '#shared/repair/repair-plan.ts';
+import { readWave } from '#shared/wave/read-wave.ts';
 import {
   sine,
   writeTestAiff,
@@ -279,5 +281,25 @@ describe('renderEntry as a source', () => {
       ),
       { numRuns: 60 },
     );
+  });
+
+  it('grows beyond 4 GiB as RF64, and is read there at once', async () => {
+    const toFrames = 1_500_000_000;
+    const source = await rendered(
+      [wave({ encoding: 'pcm', bits: 24 })],
+      [{ kind: 'pad', toFrames }],
+    );
+    expect(source.size).toBeGreaterThan(3 * toFrames);
+    expect(Buffer.from(await source.read(0, 4)).toString()).toBe('RF64');
+    const reading = await readWave(source, 'out.wav');
+    expect(reading).toMatchObject({ kind: 'track', format: { frames: toFrames } });
+    expect(await source.read(source.size - 9, 9)).toEqual(new Uint8Array(9));
+    await withFolder(async (folder) => {
+      // ffprobe reads the header of a sparse file that has only the header in it.
+      const path = await savedIn(folder, 'large.wav', await source.read(0, 4096));
+      await truncate(path, source.size);
+      const frames = ['-show_entries', 'stream=duration_ts', '-of', 'csv=p=0', path];
+      expect((await run('ffprobe', ['-v', 'error', ...frames])).trim()).toBe(String(toFrames));
+    });
   });
 });
