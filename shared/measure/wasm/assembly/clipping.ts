@@ -1,3 +1,4 @@
+import { larger } from './extremes';
 import { allocate } from './arena';
 import { granuleFrames } from './block';
 import { Channel } from './channel';
@@ -12,6 +13,9 @@ import { extendRun, leavesSteeply, Run, startRun } from './run';
  * stays below both ceilings ends open runs and is otherwise left alone, unless cycles are being
  * counted because a run was found.
  */
+
+/** Samples on their way out of a vector. */
+const lanes = memory.data(16, 16);
 
 /** The upper or the lower side of the waveform; levels are positive on both. */
 @unmanaged
@@ -36,26 +40,71 @@ export function newSide(sign: f64): Side {
 }
 
 export function findClipping<T extends number>(channel: Channel, start: f64, frames: i32): void {
+  const counting = isCounting(channel.cycles);
+  if (!counting && !touchesCeiling(channel, blockLowest, blockHighest)) return;
   for (let first = 0; first < frames; first += granuleFrames) {
     const at = (<usize>(first / granuleFrames)) << 3;
-    const touches =
-      reaches(channel.upper, load<f64>(highest + at)) ||
-      reaches(channel.lower, -load<f64>(lowest + at)) ||
-      channel.upper.run.length > 0 ||
-      channel.lower.run.length > 0;
-    if (!touches && !isCounting(channel.cycles)) continue;
     const last = min(first + granuleFrames, frames);
-    for (let i = first; i < last; i++) {
-      const sample = sampleAt<T>(channel, i);
-      const before = start + <f64>i > 0 ? sampleAt<T>(channel, i - 1) : 0;
-      followSample(channel, start + <f64>i, sample, before, touches);
+    if (isCounting(channel.cycles)) {
+      for (let i = first; i < last; i++) followSample<T>(channel, start, i);
+    } else if (touchesCeiling(channel, load<f64>(lowest + at), load<f64>(highest + at))) {
+      searchGranule<T>(channel, start, first, last);
     }
   }
 }
 
+/** Goes several samples at a time as long as they stay below both ceilings, or all at one. */
+function searchGranule<T extends number>(channel: Channel, start: f64, from: i32, to: i32): void {
+  const width = 16 / <i32>sizeof<T>();
+  let i = from;
+  while (i < to) {
+    if (i + width <= to && !isCounting(channel.cycles)) {
+      const samples = v128.load(channel.samples + <usize>i * sizeof<T>());
+      if (staysBelow<T>(channel, samples) || goesOn<T>(channel, samples)) {
+        i += width;
+        continue;
+      }
+    }
+    const end = min(i + width, to);
+    for (; i < end; i++) followSample<T>(channel, start, i);
+  }
+}
+
+function staysBelow<T extends number>(channel: Channel, samples: v128): bool {
+  if (channel.upper.run.length > 0 || channel.lower.run.length > 0) return false;
+  const high = v128.gt<T>(samples, v128.splat<T>(<T>justBelow(channel.upper)));
+  const low = v128.lt<T>(samples, v128.splat<T>(<T>-justBelow(channel.lower)));
+  return !v128.any_true(v128.or(high, low));
+}
+
+/** Lengthens the run that is going on by all these samples if all are well within it. */
+function goesOn<T extends number>(channel: Channel, samples: v128): bool {
+  const isUpper = channel.upper.run.length > 0;
+  if (isUpper == channel.lower.run.length > 0) return false;
+  const side = isUpper ? channel.upper : channel.lower;
+  const levels = isUpper ? samples : v128.neg<T>(samples);
+  const least = (side.ceiling - clippingTolerance) * 1.000001;
+  const most = (side.ceiling + clippingTolerance) * 0.999999;
+  const within = v128.and(
+    v128.ge<T>(levels, v128.splat<T>(<T>larger(least, clippingFloor * 1.000001))),
+    v128.le<T>(levels, v128.splat<T>(<T>most)),
+  );
+  if (!v128.all_true<i32>(within)) return false;
+  store<v128>(lanes, levels);
+  for (let lane = 0; lane < 16 / <i32>sizeof<T>(); lane++) {
+    extendRun(side.run, <f64>load<T>(lanes + <usize>lane * sizeof<T>()));
+  }
+  return true;
+}
+
+/** Rounding to single precision must not lift it above a sample at the ceiling. */
+function justBelow(side: Side): f64 {
+  return larger(clippingFloor, side.ceiling - clippingTolerance) * 0.999999;
+}
+
 /** Behind the file there is silence. */
 export function endClipping<T extends number>(channel: Channel, end: f64): void {
-  followSample(channel, end, 0, end > 0 ? sampleAt<T>(channel, -1) : 0, true);
+  follow(channel, end, 0, end > 0 ? sampleAt<T>(channel, -1) : 0);
 }
 
 function touchesCeiling(channel: Channel, low: f64, high: f64): bool {
@@ -75,9 +124,17 @@ function sampleAt<T extends number>(channel: Channel, index: i32): f64 {
   return <f64>load<T>(channel.samples + <usize>(<isize>index * <isize>sizeof<T>()));
 }
 
-function followSample(channel: Channel, frame: f64, sample: f64, before: f64, touches: bool): void {
-  if (touches) {
+function followSample<T extends number>(channel: Channel, start: f64, index: i32): void {
+  const frame = start + <f64>index;
+  const before = frame > 0 ? sampleAt<T>(channel, index - 1) : 0;
+  follow(channel, frame, sampleAt<T>(channel, index), before);
+}
+
+function follow(channel: Channel, frame: f64, sample: f64, before: f64): void {
+  if (sample > 0 || channel.upper.run.length > 0) {
     followSide(channel, channel.upper, frame, sample, before);
+  }
+  if (sample < 0 || channel.lower.run.length > 0) {
     followSide(channel, channel.lower, frame, -sample, -before);
   }
   if (isCounting(channel.cycles)) countCycles(channel.cycles, sample, before);
@@ -116,7 +173,7 @@ function keepRun(side: Side): void {
   const run = side.run;
   const length = <f64>run.length;
   side.samples += length;
-  side.longest = max(side.longest, length);
+  side.longest = larger(side.longest, length);
   if (run.high >= fullScaleLevel) side.fullScaleRuns += 1;
   addPlace(side.places, run.start, run.start + length);
 }

@@ -19,6 +19,7 @@ import {
   signedBytes,
 } from './parameters';
 import { openResults, put, resultList } from './results';
+import { prepareTruePeak } from './true-peak';
 import { decodeStereo16, decodeStereo24 } from './stereo-blocks';
 import { finishHash, newHash, updateHash } from './xxh3';
 
@@ -55,6 +56,7 @@ let framesDone: f64 = 0;
 export function start(): usize {
   resetArena();
   resetCrc();
+  prepareTruePeak();
   return placeParameters();
 }
 

@@ -1,4 +1,4 @@
-import { larger } from './extremes';
+import { larger, smaller } from './extremes';
 import { granuleFrames } from './block';
 import { Channel } from './channel';
 import { blockPeak, highest, lowest } from './levels';
@@ -8,10 +8,10 @@ import { blockPeak, highest, lowest } from './levels';
  *
  * The filter's phases can exceed the samples they see 2.02283 times at most, the largest sum of
  * the magnitudes of one phase's taps. More narrowly, each phase is a straight line between two
- * samples plus a weighted sum of second differences: with the largest sample m and the largest
- * second difference d, the outer phases stay below 1.00159 m + 0.16419 d and the inner ones
- * below 0.97303 m + 0.56971 d. Granules that cannot beat the peak so far are left out, which
- * changes nothing in the result.
+ * samples plus a weighted sum of second differences: with m the larger of these two (the sixth
+ * and seventh the filter sees) and d the largest second difference, the outer phases stay below
+ * 1.00159 m + 0.16419 d and the inner ones below 0.97303 m + 0.56971 d. What cannot beat the
+ * peak so far is left out, which changes nothing in the result.
  */
 const mostGain: f64 = 2.02283;
 const outerLevel: f64 = 1.00159;
@@ -47,11 +47,8 @@ export function findTruePeak<T extends number>(channel: Channel, frames: i32): v
     previous = own;
     if (level * mostGain <= best) continue;
     const first = granule * granuleFrames;
-    if (first + granuleFrames > frames) {
-      best = interpolate<T>(channel, first, frames, best);
-    } else if (canExceed<T>(channel, first, level, best)) {
-      best = searchGranule<T>(channel, first, best);
-    }
+    if (first + granuleFrames > frames) best = interpolate<T>(channel, first, frames, best);
+    else best = searchGranule<T>(channel, first, level, best);
   }
   channel.previousPeak = previous;
   channel.truePeak = best;
@@ -60,13 +57,6 @@ export function findTruePeak<T extends number>(channel: Channel, frames: i32): v
 function granulePeak(granule: i32): f64 {
   const at = (<usize>granule) << 3;
   return larger(load<f64>(highest + at), -load<f64>(lowest + at));
-}
-
-function canExceed<T extends number>(channel: Channel, first: i32, level: f64, best: f64): bool {
-  const bend = largestBend<T>(channel.samples + <usize>first * sizeof<T>());
-  return (
-    outerLevel * level + outerBend * bend > best || innerLevel * level + innerBend * bend > best
-  );
 }
 
 /** The largest second difference of a granule and of the samples its filter sees before it. */
@@ -98,46 +88,59 @@ function largestLane<T extends number>(values: v128): f64 {
   );
 }
 
-/**
- * The four phases are two and their mirror images. With the sums s and differences d of the
- * samples that lie opposite each other, a phase is E(s) + O(d) and its mirror E(s) - O(d), so
- * the larger of both is |E| + |O|: half the multiplications.
- */
-function searchGranule<T extends number>(channel: Channel, first: i32, best: f64): f64 {
+/** Looks at the samples between which the curve can rise above `best`. */
+function searchGranule<T extends number>(channel: Channel, first: i32, level: f64, best: f64): f64 {
+  const start = channel.samples + <usize>first * sizeof<T>();
+  const bend = largestBend<T>(start);
+  let least = leastLevel(bend, best);
+  if (level <= least) return best;
   const lanes = 16 / <i32>sizeof<T>();
-  let at = channel.samples + <usize>first * sizeof<T>();
-  for (let i = 0; i < granuleFrames; i += lanes, at += 16) {
-    let outerEven = v128.splat<T>(<T>0);
-    let outerOdd = outerEven;
-    let innerEven = outerEven;
-    let innerOdd = outerEven;
-    for (let tap = 0; tap < tapCount / 2; tap++) {
-      const near = v128.load(at - <usize>tap * sizeof<T>());
-      const far = v128.load(at - <usize>(tapCount - 1 - tap) * sizeof<T>());
-      const sum = v128.add<T>(near, far);
-      const difference = v128.sub<T>(near, far);
-      outerEven = v128.add<T>(outerEven, v128.mul<T>(sum, even<T>(outer, tap)));
-      outerOdd = v128.add<T>(outerOdd, v128.mul<T>(difference, odd<T>(outer, tap)));
-      innerEven = v128.add<T>(innerEven, v128.mul<T>(sum, even<T>(inner, tap)));
-      innerOdd = v128.add<T>(innerOdd, v128.mul<T>(difference, odd<T>(inner, tap)));
-    }
-    const most = v128.pmax<T>(
-      v128.add<T>(v128.abs<T>(outerEven), v128.abs<T>(outerOdd)),
-      v128.add<T>(v128.abs<T>(innerEven), v128.abs<T>(innerOdd)),
+  for (let i = 0; i < granuleFrames; i += lanes) {
+    const at = start + <usize>i * sizeof<T>();
+    const sides = v128.pmax<T>(
+      v128.abs<T>(v128.load(at - 5 * sizeof<T>())),
+      v128.abs<T>(v128.load(at - 6 * sizeof<T>())),
     );
-    if (largestLane<T>(most) > best * slack) {
+    if (!v128.any_true(v128.gt<T>(sides, v128.splat<T>(<T>(least * slack))))) continue;
+    if (largestLane<T>(estimate<T>(at)) > best * slack) {
       best = interpolate<T>(channel, first + i, first + i + lanes, best);
+      least = leastLevel(bend, best);
     }
   }
   return best;
 }
 
-function even<T extends number>(phase: usize, tap: i32): v128 {
-  return v128.splat<T>(<T>((coefficient(phase, tap) + coefficient(phase, 11 - tap)) / 2));
+/** The least level of both samples a line lies between from which it can lead above `best`. */
+function leastLevel(bend: f64, best: f64): f64 {
+  return smaller((best - outerBend * bend) / outerLevel, (best - innerBend * bend) / innerLevel);
 }
 
-function odd<T extends number>(phase: usize, tap: i32): v128 {
-  return v128.splat<T>(<T>((coefficient(phase, tap) - coefficient(phase, 11 - tap)) / 2));
+/**
+ * The largest magnitude of the four phases at some samples. The phases are two and their mirror
+ * images. With the sums s and differences d of the samples that lie opposite each other, a phase
+ * is E(s) + O(d) and its mirror E(s) - O(d), so the larger of both is |E| + |O|: half the
+ * multiplications.
+ */
+function estimate<T extends number>(at: usize): v128 {
+  let outerEven = v128.splat<T>(<T>0);
+  let outerOdd = outerEven;
+  let innerEven = outerEven;
+  let innerOdd = outerEven;
+  let factors = sizeof<T>() == 4 ? factors32 : factors64;
+  let near = at;
+  let far = at - <usize>(tapCount - 1) * sizeof<T>();
+  for (; far < near; near -= sizeof<T>(), far += sizeof<T>(), factors += 64) {
+    const sum = v128.add<T>(v128.load(near), v128.load(far));
+    const difference = v128.sub<T>(v128.load(near), v128.load(far));
+    outerEven = v128.add<T>(outerEven, v128.mul<T>(sum, v128.load(factors)));
+    outerOdd = v128.add<T>(outerOdd, v128.mul<T>(difference, v128.load(factors, 16)));
+    innerEven = v128.add<T>(innerEven, v128.mul<T>(sum, v128.load(factors, 32)));
+    innerOdd = v128.add<T>(innerOdd, v128.mul<T>(difference, v128.load(factors, 48)));
+  }
+  return v128.pmax<T>(
+    v128.add<T>(v128.abs<T>(outerEven), v128.abs<T>(outerOdd)),
+    v128.add<T>(v128.abs<T>(innerEven), v128.abs<T>(innerOdd)),
+  );
 }
 
 function coefficient(phase: usize, tap: i32): f64 {
@@ -147,20 +150,49 @@ function coefficient(phase: usize, tap: i32): f64 {
 /** The larger of `best` and all four phases at some samples, in double precision. */
 function interpolate<T extends number>(channel: Channel, from: i32, to: i32, best: f64): f64 {
   for (let i = from; i < to; i++) {
-    let outerPhase: f64 = 0;
-    let outerMirror: f64 = 0;
-    let innerPhase: f64 = 0;
-    let innerMirror: f64 = 0;
+    // Each with its mirror image.
+    let outerPhases = f64x2.splat(0);
+    let innerPhases = f64x2.splat(0);
     for (let tap = 0; tap < tapCount; tap++) {
       const at = channel.samples + <usize>(<isize>(i - tap) * <isize>sizeof<T>());
-      const sample = <f64>load<T>(at);
-      outerPhase += coefficient(outer, tap) * sample;
-      outerMirror += coefficient(outer, 11 - tap) * sample;
-      innerPhase += coefficient(inner, tap) * sample;
-      innerMirror += coefficient(inner, 11 - tap) * sample;
+      const sample = f64x2.splat(<f64>load<T>(at));
+      const taps = mirrored + ((<usize>tap) << 5);
+      outerPhases = f64x2.add(outerPhases, f64x2.mul(v128.load(taps), sample));
+      innerPhases = f64x2.add(innerPhases, f64x2.mul(v128.load(taps, 16), sample));
     }
-    best = larger(best, larger(Math.abs(outerPhase), Math.abs(outerMirror)));
-    best = larger(best, larger(Math.abs(innerPhase), Math.abs(innerMirror)));
+    const most = f64x2.pmax(f64x2.abs(outerPhases), f64x2.abs(innerPhases));
+    best = larger(best, largestLane<f64>(most));
   }
   return best;
+}
+
+/** Per tap the coefficients of both phases, each beside that of its mirror image. */
+const mirrored = memory.data(12 * 32, 16);
+
+/** Per pair of taps what E and O multiply with, in every lane: outer E, O, inner E, O. */
+const factors32 = memory.data(6 * 64, 16);
+const factors64 = memory.data(6 * 64, 16);
+
+export function prepareTruePeak(): void {
+  for (let tap = 0; tap < tapCount; tap++) {
+    const at = mirrored + ((<usize>tap) << 5);
+    store<f64>(at, coefficient(outer, tap));
+    store<f64>(at, coefficient(outer, tapCount - 1 - tap), 8);
+    store<f64>(at, coefficient(inner, tap), 16);
+    store<f64>(at, coefficient(inner, tapCount - 1 - tap), 24);
+  }
+  for (let tap = 0; tap < tapCount / 2; tap++) {
+    const place = (<usize>tap) << 6;
+    storeFactors(place, coefficient(outer, tap), coefficient(outer, tapCount - 1 - tap));
+    storeFactors(place + 32, coefficient(inner, tap), coefficient(inner, tapCount - 1 - tap));
+  }
+}
+
+function storeFactors(place: usize, near: f64, far: f64): void {
+  const even = (near + far) / 2;
+  const odd = (near - far) / 2;
+  v128.store(factors32 + place, f32x4.splat(<f32>even));
+  v128.store(factors32 + place, f32x4.splat(<f32>odd), 16);
+  v128.store(factors64 + place, f64x2.splat(even));
+  v128.store(factors64 + place, f64x2.splat(odd), 16);
 }
