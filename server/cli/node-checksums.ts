@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import { crc32 as zlibCrc32 } from 'node:zlib';
 import type { ChecksumEngine } from '#shared/pack/checksums.ts';
-import { crc32 } from '#shared/pack/crc32.ts';
+import { crc32 } from '#shared/bytes/crc32.ts';
 
 /** Node's own checksums, several times faster than any in JavaScript. */
 export const nodeChecksums: ChecksumEngine = {

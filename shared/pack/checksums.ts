@@ -1,4 +1,4 @@
-import { crc32 } from './crc32.ts';
+import { crc32 } from '../bytes/crc32.ts';
 import { Sha256 } from './sha256.ts';
 
 /**

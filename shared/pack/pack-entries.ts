@@ -1,7 +1,7 @@
 import type { OpenByteSource } from '../bytes/byte-source.ts';
 import { AppError } from '../errors.ts';
 import { checksumFileBytes, writeChecksumFile } from './checksums.ts';
-import { checksumFileName } from './safe-names.ts';
+import { checksumFileName } from '../naming/safe-names.ts';
 import type { ChecksumEngine } from './checksums.ts';
 import { zipSize, writeZip, type ZipEntry } from './zip-writer.ts';
 

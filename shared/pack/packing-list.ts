@@ -6,7 +6,7 @@ import { writeReport } from '../report/fit-report.ts';
 import type { MeasuredFile } from '../session/measured-file.ts';
 import type { ChecksumEngine } from './checksums.ts';
 import { madeFile, type PackedFile } from './pack-entries.ts';
-import { reportFileName, trackSheetFileName } from './safe-names.ts';
+import { reportFileName, trackSheetFileName } from '../naming/safe-names.ts';
 
 export type PackingInput = {
   plan: RepairPlan;

@@ -1,7 +1,7 @@
 import type { DroppedFile } from '../bytes/byte-source.ts';
 import { AppError } from '../errors.ts';
 import type { ChecksumEngine } from './checksums.ts';
-import { checksumFileName } from './safe-names.ts';
+import { checksumFileName } from '../naming/safe-names.ts';
 
 /** What became of the files of a package since it was packed; paths inside the package folder. */
 export type PackageVerification = {

@@ -5,7 +5,7 @@ import type { Judgement } from '../judge/judge-session.ts';
 import { countLevels, verdictOf } from '../judge/verdict.ts';
 import type { SessionInformation } from '../session/session-information.ts';
 import type { RepairPlan } from './repair-plan.ts';
-import { fileNameOf, splitExtension } from '../pack/safe-names.ts';
+import { fileNameOf, splitExtension } from '../naming/safe-names.ts';
 
 /**
  * What was said about the dropped files, said about the entries they became: paths are those in

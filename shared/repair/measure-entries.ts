@@ -1,5 +1,5 @@
 import type { DroppedFile } from '../bytes/byte-source.ts';
-import { crc32, crc32Hex, cutHeadCrc32, cutTailCrc32, joinCrc32 } from '../pack/crc32.ts';
+import { crc32, crc32Hex, cutHeadCrc32, cutTailCrc32, joinCrc32 } from '../bytes/crc32.ts';
 import { measureAll, type MeasureAllOptions } from '../session/measure-all.ts';
 import type { MeasureFile } from '../session/measure-file.ts';
 import type { MeasuredFile } from '../session/measured-file.ts';

@@ -1,7 +1,7 @@
 import { clashKey } from '../naming/fold-name.ts';
 import { parseName } from '../naming/parse-name.ts';
 import { proposeNames, type FileToName } from '../naming/propose-names.ts';
-import { fileNameOf, splitExtension } from '../pack/safe-names.ts';
+import { fileNameOf, splitExtension } from '../naming/safe-names.ts';
 import type { NamingRules } from '../rules/naming-rules.ts';
 import type { SessionInformation } from '../session/session-information.ts';
 import type { Draft } from './draft-entries.ts';

@@ -7,7 +7,7 @@ import {
   reportFileName,
   splitExtension,
   trackSheetFileName,
-} from '../pack/safe-names.ts';
+} from '../naming/safe-names.ts';
 import type { HouseRules } from '../rules/house-rules.ts';
 import { isJunk } from '../session/junk-files.ts';
 import type { MeasuredFile } from '../session/measured-file.ts';

@@ -4,7 +4,7 @@ import { allFindings } from '../judge/all-findings.ts';
 import { judgeVersion } from '../judge/judge-session.ts';
 import { measureVersion } from '../measure/measures.ts';
 import { folderName } from '../naming/folder-name.ts';
-import { safeNamePart } from '../pack/safe-names.ts';
+import { safeNamePart } from '../naming/safe-names.ts';
 import { hashRules } from '../rules/canonical-json.ts';
 import type { HouseRules } from '../rules/house-rules.ts';
 import type { MeasuredFile } from '../session/measured-file.ts';

@@ -1,5 +1,5 @@
 import type { RepairKind } from '../findings/finding.ts';
-import { fileNameOf, splitExtension } from '../pack/safe-names.ts';
+import { fileNameOf, splitExtension } from '../naming/safe-names.ts';
 import type { Operation, PlannedEntry, RepairPlan } from '../repair/repair-plan.ts';
 import type { MeasuredFile } from '../session/measured-file.ts';
 

@@ -1,5 +1,5 @@
 import { createSHA256, type IHasher } from 'hash-wasm';
-import { crc32 } from '#shared/pack/crc32.ts';
+import { crc32 } from '#shared/bytes/crc32.ts';
 import type { ChecksumEngine } from '#shared/pack/checksums.ts';
 
 /** Checksums for packing: SHA-256 in WebAssembly, hashers kept and used again. */

@@ -2,7 +2,7 @@ import { judgeCheck, type SessionCheck } from '#shared/check.ts';
 import { emptyComparison, type Comparison } from '#shared/compare/comparison.ts';
 import { AppError } from '#shared/errors.ts';
 import type { Finding } from '#shared/findings/finding.ts';
-import { checksumFileName } from '#shared/pack/safe-names.ts';
+import { checksumFileName } from '#shared/naming/safe-names.ts';
 import { unaskedRepairs } from '#shared/repair/choose-repairs.ts';
 import type { ChosenRepair, RepairPlan } from '#shared/repair/repair-plan.ts';
 import { buildReport } from '#shared/report/build-report.ts';
@@ -19,7 +19,7 @@ import type { ExcerptPlace } from './excerpts.ts';
 import { BenchWorkers } from './bench-workers.ts';
 import { isCopyOf, listIntake, zipAlone } from './intake-list.ts';
 import { measureFiles } from './measure-files.ts';
-import { recallSong, rememberSong } from './remembered-songs.ts';
+import { forgetSong, recallSong, rememberSong } from './remembered-songs.ts';
 import { sampleSong } from './sample-session/sample-song.ts';
 import { compareFileLists, isTrusted, joinFiles, joinOlder, stampOf } from './session-files.ts';
 import { verifyZip } from './verify-zip.ts';
@@ -139,6 +139,14 @@ export class Bench {
     this.set({ information: { ...this.state.information, ...change } });
     rememberSong(this.state.folderName, this.state.information);
     if (this.state.phase === 'checked') this.judge(typingMs);
+  };
+
+  /** Clears what was said about the song, here and in the browser's memory. The check stays. */
+  readonly forget = (): void => {
+    if (this.state.folderName !== null) forgetSong(this.state.folderName);
+    const { information } = waitingBench;
+    this.set({ information, chosen: [], forgotten: this.state.forgotten + 1 });
+    this.judge(0);
   };
 
   /** Other rules: what is measured stays, only the findings are worked out anew. */

@@ -1,5 +1,5 @@
 import { AppError } from '#shared/errors.ts';
-import { offerDownload } from '../browser/offer-download.ts';
+import { offerDownload } from '../workers/offer-download.ts';
 import type { PackOutput, PackProgress } from '../workers/session-api.ts';
 import type { Bench } from './bench.ts';
 

@@ -4,7 +4,7 @@ import type { Finding, Level } from '../../findings/finding.ts';
 import { describeOperation } from '../../repair/describe-operation.ts';
 import type { CheckReport, ReportEntry, ReportFile } from '../../report/check-report.ts';
 import type { AnswerKind, SessionInformation, Tempo } from '../../session/session-information.ts';
-import { fileNameOf, splitExtension } from '../safe-names.ts';
+import { fileNameOf, splitExtension } from '../../naming/safe-names.ts';
 
 /** One track of the sheet, all of it as it is printed. */
 export type SheetTrack = {

@@ -14,7 +14,7 @@ import { crc32 as zlibCrc32 } from 'node:zlib';
 import fc from 'fast-check';
 import JSZip from 'jszip';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { joinCrc32 } from '#shared/pack/crc32.ts';
+import { joinCrc32 } from '#shared/bytes/crc32.ts';
 import { writeZip, zipSize, type ZipEntry } from '#shared/pack/zip-writer.ts';
 
 /** Python's zipfile: names, sizes and contents' CRC (testzip reads every byte) of a zip. */

@@ -1,5 +1,5 @@
 import { AppError } from '#shared/errors.ts';
-import { downloadPrefix, type DownloadOffer } from '../workers/download-offer.ts';
+import { downloadPrefix, type DownloadOffer } from './download-offer.ts';
 
 /** Registers the service worker that turns streams into downloads; safe to call many times. */
 export async function registerDownloads(): Promise<ServiceWorker> {

@@ -1,4 +1,4 @@
-import { clashKey } from '../naming/fold-name.ts';
+import { clashKey } from './fold-name.ts';
 
 /**
  * Names that every file system and every checksum tool takes. Windows: no `< > : " / \ | ? *`, no

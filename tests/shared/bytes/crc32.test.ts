@@ -1,7 +1,7 @@
 import { crc32 as zlibCrc32 } from 'node:zlib';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
-import { crc32, cutHeadCrc32, cutTailCrc32, joinCrc32 } from '#shared/pack/crc32.ts';
+import { crc32, cutHeadCrc32, cutTailCrc32, joinCrc32 } from '#shared/bytes/crc32.ts';
 
 const bytes = fc.uint8Array({ maxLength: 300 });
 
