@@ -9,6 +9,9 @@ export type ProgressLine = {
 
 const fastestMs = 80;
 
+/** Where a terminal does not say how wide it is. */
+const usualColumns = 80;
+
 export function progressLine(stream: WriteStream): ProgressLine {
   if (!stream.isTTY) return { show: () => undefined, clear: () => undefined };
   let last = 0;
@@ -21,7 +24,9 @@ export function progressLine(stream: WriteStream): ProgressLine {
       isShown = true;
       const percent = total > 0 ? Math.min(100, Math.floor((100 * done) / total)) : 100;
       const line = `${what} ${String(percent).padStart(3)} %  ${printable(detail)}`;
-      stream.write(`\r\u001b[K${[...line].slice(0, stream.columns - 1).join('')}`);
+      stream.write(
+        `\r\u001b[K${[...line].slice(0, (stream.columns || usualColumns) - 1).join('')}`,
+      );
     },
     clear() {
       if (isShown) stream.write('\r\u001b[K');

@@ -13,6 +13,7 @@ import { measureHere } from '#shared/session/measure-file.ts';
 import { emptySessionInformation } from '#shared/session/session-information.ts';
 import { loadMeters } from '../../../server/cli/load-meters.ts';
 import { bextChunk } from '../../support/audio-writer.ts';
+import { countingSource } from '../../support/counting-source.ts';
 import { run, withFolder } from '../../support/outside-programs.ts';
 import { droppedBytes, savedIn, soxSamples } from '../../support/rendering.ts';
 import {
@@ -145,6 +146,28 @@ describe('the package', () => {
     const options = { information: about, sheet: true, choose: safeRepairs };
     const again = await tellStory(shuffled, options);
     expect(again.zip.equals(story.zip)).toBe(true);
+  });
+});
+
+describe('reading', () => {
+  it('takes no file in pieces of more than 1 MiB, from the check to the zip', async () => {
+    const long = waveOf([new Array<number>(900_000).fill(0).map((_, i) => 0.3 * Math.sin(i / 7))]);
+    const counters: ReturnType<typeof countingSource>[] = [];
+    const watched = Object.entries({ ...cleanSession(), 'Organ.wav': long }).map(
+      ([path, bytes]) => {
+        const file = droppedBytes(path, bytes);
+        const open = async () => {
+          const source = await file.open();
+          const counting = countingSource(source);
+          counters.push(counting);
+          return { ...counting, close: () => source.close() };
+        };
+        return { ...file, open };
+      },
+    );
+    await tellStory(watched, { choose: safeRepairs });
+    expect(counters.length).toBeGreaterThan(5);
+    expect(Math.max(...counters.map(({ counts }) => counts.largest))).toBeLessThanOrEqual(1 << 20);
   });
 });
 
