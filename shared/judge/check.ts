@@ -38,6 +38,8 @@ export type CheckedSession = {
   rules: HouseRules;
   information: SessionInformation;
   files: readonly CheckedFile[];
+  /** How many files there are of each part, by partKey(). */
+  filesOfPart: ReadonlyMap<string, number>;
   /** Measured files with the role of a track, a click or a guide. */
   tracks: readonly CheckedTrack[];
   format: SessionFormat;

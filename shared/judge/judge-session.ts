@@ -20,6 +20,7 @@ import {
 import { nameFiles } from './file-names.ts';
 import type { JudgedSession } from './judged-session.ts';
 import { levelUnderRules } from './levels.ts';
+import { countParts } from './same-part.ts';
 import { inCodeOrder, shareLines } from './shared-lines.ts';
 import { countLevels, verdictOf, type Verdict } from './verdict.ts';
 
@@ -198,6 +199,7 @@ function prepareSession(
     rules,
     information,
     files,
+    filesOfPart: countParts(named),
     tracks: measured.map((track, index): CheckedTrack => ({
       ...track,
       framesAtSessionRate: framesAtRate(

@@ -20,3 +20,13 @@ export function partKey({ instrument, ordinal, detail, side }: FileName): string
   const details = detail.filter((word) => !versionDetails.has(word));
   return JSON.stringify([instrument, ordinal, [...details].sort(), side]);
 }
+
+/** How many files there are of each part that is known. */
+export function countParts(names: readonly FileName[]): Map<string, number> {
+  const counts = new Map<string, number>();
+  for (const name of names) {
+    const key = partKey(name);
+    if (key !== null) counts.set(key, (counts.get(key) ?? 0) + 1);
+  }
+  return counts;
+}

@@ -1,6 +1,6 @@
 import { found, type TrackCheck } from '../check.ts';
 import { peakOf } from '../track-measures.ts';
-import { hasFlatRuns } from './clipped.ts';
+import { hasFlatRuns } from '../clipped-channels.ts';
 
 /**
  * Peaks above the ceiling of the rules. Unless the rules give it a level of its own, it is not

@@ -11,60 +11,68 @@ import { onlyChannel } from '../track-measures.ts';
  * that stopped for an instant, unless it stopped and went on with the beat.
  */
 export const dropout: TrackCheck = (track, session) => {
-  const places = placesOf(track, session);
-  if (!places) return null;
+  const gaps = gapsOf(session);
+  const own = gaps.get(track);
+  if (!own) return null;
   const shared = new Set<FindingRange>();
   const sharedWith: string[] = [];
-  for (const other of session.tracks) {
-    if (other.path === track.path || sameInstrument(other.name, track.name)) continue;
-    const together = atTheSameTime(track, places.ranges, other, session);
-    if (together.length === 0) continue;
-    sharedWith.push(other.path);
+  for (const [other, { ranges }] of gaps) {
+    if (other === track || sameInstrument(other.name, track.name)) continue;
+    const together = atTheSameTime(track, own.ranges, other, ranges, session);
+    if (together.length > 0) sharedWith.push(other.path);
     for (const range of together) shared.add(range);
   }
   const { sampleRateHz } = track.format;
-  const longest = Math.max(...places.ranges.map((range) => range.endFrame - range.startFrame));
+  const longest = Math.max(...own.ranges.map((range) => range.endFrame - range.startFrame));
+  const isStumble = [...shared].some((range) => !isOnTheBeat(range, track, session));
   return found(
     'dropout',
     {
       longestMs: (longest / sampleRateHz) * 1000,
-      firstSeconds: (places.ranges[0]?.startFrame ?? 0) / sampleRateHz,
+      firstSeconds: (own.ranges[0]?.startFrame ?? 0) / sampleRateHz,
       sharedPlaces: shared.size,
       sharedWith,
     },
-    {
-      ...places,
-      level: [...shared].some((range) => !isOnTheBeat(range, track, session)) ? 'must-fix' : 'look',
-    },
+    { ...own, level: isStumble ? 'must-fix' : 'look' },
   );
 };
 
-function placesOf(
-  { measures }: CheckedTrack,
-  { rules }: CheckedSession,
-): { places: number; ranges: FindingRange[]; channel?: number } | null {
-  const most = rules.signal.dropoutMostPlaces;
-  if (measures.channels.some(({ dropouts }) => dropouts.count > most)) return null;
+type Gaps = { places: number; ranges: FindingRange[]; channel?: number };
+
+const known = new WeakMap<CheckedSession, Map<CheckedTrack, Gaps>>();
+
+/** The gaps of all tracks that have some, but not so many that they are a style. */
+function gapsOf(session: CheckedSession): Map<CheckedTrack, Gaps> {
+  const before = known.get(session);
+  if (before) return before;
+  const gaps = new Map<CheckedTrack, Gaps>();
+  for (const track of session.tracks) {
+    const own = fewGaps(track, session.rules.signal.dropoutMostPlaces);
+    if (own) gaps.set(track, own);
+  }
+  known.set(session, gaps);
+  return gaps;
+}
+
+function fewGaps({ measures }: CheckedTrack, most: number): Gaps | null {
   const hit = measures.channels.flatMap(({ dropouts }, index) =>
     dropouts.count > 0 ? [{ ...dropouts, index }] : [],
   );
-  if (hit.length === 0) return null;
+  if (hit.length === 0 || hit.some(({ count }) => count > most)) return null;
   const joined = joinPlaces(hit);
-  if (joined.places > most) return null;
-  return { ...joined, ...onlyChannel(hit.map(({ index }) => index)) };
+  return joined.places > most ? null : { ...joined, ...onlyChannel(hit.map(({ index }) => index)) };
 }
 
 function atTheSameTime(
   track: CheckedTrack,
-  ranges: readonly FindingRange[],
+  own: readonly FindingRange[],
   other: CheckedTrack,
-  session: CheckedSession,
+  others: readonly FindingRange[],
+  { rules }: CheckedSession,
 ): FindingRange[] {
-  const others = placesOf(other, session)?.ranges ?? [];
   // Half a sample of slack: times in seconds are not exact.
-  const within =
-    session.rules.signal.dropoutSimultaneousMs / 1000 + 0.5 / track.format.sampleRateHz;
-  return ranges.filter((range) => {
+  const within = rules.signal.dropoutSimultaneousMs / 1000 + 0.5 / track.format.sampleRateHz;
+  return own.filter((range) => {
     const at = range.startFrame / track.format.sampleRateHz;
     return others.some(
       ({ startFrame }) => Math.abs(startFrame / other.format.sampleRateHz - at) <= within,

@@ -28,8 +28,6 @@ export const exportLeftover: FileCheck = (file, session) => {
 };
 
 /** A counter that tells this file from another of the same part is no leftover. */
-function countTells({ path, name }: CheckedFile, { files }: CheckedSession): boolean {
-  if (name.counter === null) return false;
-  const key = partKey(name);
-  return files.some((other) => other.path !== path && partKey(other.name) === key);
+function countTells({ name }: CheckedFile, { filesOfPart }: CheckedSession): boolean {
+  return name.counter !== null && (filesOfPart.get(partKey(name) ?? '') ?? 0) > 1;
 }

@@ -1,6 +1,6 @@
 import { found, type TrackCheck } from '../check.ts';
 import { highest, onlyChannel } from '../track-measures.ts';
-import { hasFlatRuns, isClipped } from './clipped.ts';
+import { hasFlatRuns, isClipped } from '../clipped-channels.ts';
 
 /** Flat in nearly every cycle: fuzz, a square wave, clipped on purpose. Worth knowing, no fault. */
 export const flatTops: TrackCheck = (track, { rules }) => {
