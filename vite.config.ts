@@ -16,6 +16,8 @@ export default defineConfig({
     // Every browser that can run the check knows modulepreload; the first page stays lighter.
     modulePreload: { polyfill: false },
     rolldownOptions: {
+      // How long the build's plug-ins took is no news to whoever starts the product.
+      checks: { pluginTimings: false },
       input: {
         main: 'index.html',
         'service-worker': 'src/workers/download.service-worker.ts',
