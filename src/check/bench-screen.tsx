@@ -130,8 +130,12 @@ function BusyBench({ bench, state, view, edition, projectId, rulesLine }: BusyBe
       {fieldsShown && (
         <div className="px-4 pb-6 sm:px-7">
           <SongDetails
+            // Fields that keep what is typed begin anew once the song is forgotten.
+            key={state.forgotten}
             information={state.information}
             rules={bench.rules}
+            tracks={view.files.filter(({ role }) => role === 'track').map(({ path }) => path)}
+            onForget={bench.forget}
             onChange={bench.setInformation}
           />
         </div>
@@ -194,6 +198,8 @@ function overviewsOf(check: BenchState['check']): ReadonlyMap<string, Overview> 
 function openRepairs(view: ViewedSession, chosen: readonly ChosenRepair[]): ChosenRepair[] {
   return safeRepairs(allFindings(view)).filter(
     (repair) =>
-      !chosen.some(({ code, files }) => code === repair.code && files[0] === repair.files[0]),
+      !repair.files.every((path) =>
+        chosen.some(({ code, files }) => code === repair.code && files.includes(path)),
+      ),
   );
 }

@@ -42,6 +42,8 @@ export type BenchState = {
   /** What the last reading of a session that was there already found; null for a first one. */
   readAgain: ReadAgain | null;
   information: SessionInformation;
+  /** How often a song was forgotten here. */
+  forgotten: number;
   chosen: readonly ChosenRepair[];
   /** What is found so far; complete once the phase is `checked`. */
   check: SessionCheck | null;
@@ -70,6 +72,7 @@ export const waitingBench: BenchState = {
   verification: null,
   readAgain: null,
   information: emptySessionInformation(),
+  forgotten: 0,
   chosen: [],
   check: null,
   view: null,

@@ -1,10 +1,11 @@
-import { memo, useRef, type ReactNode } from 'react';
+import { memo, useEffect, useMemo, useRef, type ReactNode } from 'react';
 import type { Overview } from '#shared/measure/overview.ts';
 import { Button } from '../ui/button.tsx';
 import { Strip, StripRuler, StripSheet } from '../ui/strip.tsx';
 import { fileName } from './file-name.ts';
 import { Lane } from './lane.tsx';
-import { LaneMarks } from './lane-marks.tsx';
+import { markOf } from './finding-anchor.ts';
+import { LaneMarks, sharedMarks, type Mark } from './lane-marks.tsx';
 import { rulerMarks, type BarGrid } from './time-axis.ts';
 import type { TimeView } from './time-view.ts';
 import { useTimeView } from './use-time-view.ts';
@@ -13,19 +14,26 @@ import type { ViewedFile, ViewedSession } from './viewed-session.ts';
 type SideBySideProps = {
   view: ViewedSession;
   overviews: ReadonlyMap<string, Overview>;
-  /** A mark was pressed: show that finding. */
-  onFinding: (path: string, code: string) => void;
+  /** What was asked to be shown; a new object asks anew. */
+  place: ShownPlace | null;
+  /** A mark was pressed: show the finding with this anchor. */
+  onFinding: (anchor: string) => void;
 };
 
+/** A finding's file, and its first place in seconds where it has one. */
+export type ShownPlace = { path: string; code: string; seconds: number | null };
+
 /** The picture: every track from one start line on one time axis, findings at their place. */
-export function SideBySide({ view: session, overviews, onFinding }: SideBySideProps) {
+export function SideBySide({ view: session, overviews, place, onFinding }: SideBySideProps) {
   const sheet = useRef<HTMLDivElement>(null);
   const tracks = session.files.filter((file) => file.format !== null);
   const songSeconds = Math.max(
     0.001,
     ...tracks.map(({ format }) => format!.frames / format!.sampleRateHz),
   );
-  const { view, isWhole, actions, onKeyDown } = useTimeView(songSeconds, sheet);
+  const { view, isWhole, actions, show, onKeyDown } = useTimeView(songSeconds, sheet);
+  const shared = useMemo(() => sharedMarks(session), [session]);
+  useShownPlace(place, show);
   return (
     <div
       ref={sheet}
@@ -70,6 +78,8 @@ export function SideBySide({ view: session, overviews, onFinding }: SideBySidePr
           <TrackStrip
             key={file.path}
             file={file}
+            shared={shared.get(file.path) ?? none}
+            isShown={place?.path === file.path}
             overview={overviews.get(file.path)}
             view={view}
             songSeconds={songSeconds}
@@ -81,8 +91,31 @@ export function SideBySide({ view: session, overviews, onFinding }: SideBySidePr
   );
 }
 
+/** One object for all strips without such marks, so that they are not drawn again for nothing. */
+const none: readonly Mark[] = [];
+
+/** Moves the view and the keyboard to the place; the mark there leads back to the finding. */
+function useShownPlace(place: ShownPlace | null, show: (seconds: number) => void): void {
+  const latestShow = useRef(show);
+  useEffect(() => {
+    latestShow.current = show;
+  }, [show]);
+  useEffect(() => {
+    if (!place) return;
+    if (place.seconds !== null) latestShow.current(place.seconds);
+    const frame = requestAnimationFrame(() => {
+      const mark = document.getElementById(markOf(place.path, place.code));
+      mark?.closest('.strip')?.scrollIntoView({ block: 'nearest' });
+      mark?.focus({ preventScroll: true });
+    });
+    return () => cancelAnimationFrame(frame);
+  }, [place]);
+}
+
 type TrackStripProps = {
   file: ViewedFile;
+  shared: readonly Mark[];
+  isShown: boolean;
   overview: Overview | undefined;
   view: TimeView;
   songSeconds: number;
@@ -91,6 +124,8 @@ type TrackStripProps = {
 
 const TrackStrip = memo(function TrackStrip({
   file,
+  shared,
+  isShown,
   overview,
   view,
   songSeconds,
@@ -104,6 +139,7 @@ const TrackStrip = memo(function TrackStrip({
   const endsEarly = frames / sampleRateHz < songSeconds - 0.0005 && endsAt < 1;
   return (
     <Strip
+      className={isShown ? 'bg-wash' : ''}
       name={proposedName ?? ownName}
       detail={proposedName === null || proposedName === ownName ? undefined : ownName}
     >
@@ -116,7 +152,7 @@ const TrackStrip = memo(function TrackStrip({
           />
         )}
       </div>
-      <LaneMarks file={file} view={view} onFinding={onFinding} />
+      <LaneMarks file={file} shared={shared} view={view} onFinding={onFinding} />
     </Strip>
   );
 });

@@ -1,6 +1,7 @@
 import type { SessionInformation } from '#shared/session/session-information.ts';
 import { Field } from '../ui/field.tsx';
 import { TextInput } from '../ui/text-input.tsx';
+import { BpmField } from './tempo-field.tsx';
 
 type SongFieldsProps = {
   information: SessionInformation;
@@ -9,9 +10,23 @@ type SongFieldsProps = {
 
 /** Artist, title and tempo: they name the package and draw the bars. */
 export function SongFields({ information, onChange }: SongFieldsProps) {
-  const { artist, title, tempo } = information;
   return (
-    <div className="grid gap-4 text-start sm:grid-cols-[1fr_1fr_8rem]">
+    <div className="grid gap-4 text-start sm:grid-cols-[1fr_8rem]">
+      <NameFields information={information} onChange={onChange} />
+      <BpmField
+        label="Tempo, BPM"
+        tempo={information.tempo}
+        onChange={(tempo) => onChange({ tempo })}
+      />
+    </div>
+  );
+}
+
+/** Whose song it is, and which. */
+export function NameFields({ information, onChange }: SongFieldsProps) {
+  const { artist, title } = information;
+  return (
+    <div className="grid gap-4 sm:grid-cols-2">
       <Field label="Artist">
         {(control) => (
           <TextInput
@@ -32,22 +47,6 @@ export function SongFields({ information, onChange }: SongFieldsProps) {
           />
         )}
       </Field>
-      <Field label="Tempo, BPM">
-        {(control) => (
-          <TextInput
-            {...control}
-            inputMode="decimal"
-            defaultValue={tempo?.kind === 'fixed' ? String(tempo.bpm) : ''}
-            onChange={({ target }) => onChange({ tempo: tempoFrom(target.value) })}
-          />
-        )}
-      </Field>
     </div>
   );
-}
-
-/** A tempo as typed, with a point or a comma; null while it is none. */
-function tempoFrom(text: string): SessionInformation['tempo'] {
-  const bpm = Number(text.trim().replace(',', '.'));
-  return text.trim() !== '' && bpm >= 10 && bpm <= 999 ? { kind: 'fixed', bpm } : null;
 }

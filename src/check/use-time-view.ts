@@ -6,10 +6,13 @@ import {
   type KeyboardEvent,
   type RefObject,
 } from 'react';
-import { panned, withinSong, zoomed, type TimeView } from './time-view.ts';
+import { centredOn, panned, withinSong, zoomed, type TimeView } from './time-view.ts';
 
 const closer = 0.6;
 const wider = 1 / closer;
+
+/** About a bar: a place is seen with what lies around it. */
+const shownSeconds = 2;
 
 /** Zoom and pan of the picture, by wheel, keys and buttons. The lanes lie in `sheet`. */
 export function useTimeView(songSeconds: number, sheet: RefObject<HTMLElement | null>) {
@@ -55,6 +58,21 @@ export function useTimeView(songSeconds: number, sheet: RefObject<HTMLElement | 
     return () => element.removeEventListener('wheel', onWheel);
   }, [sheet, change, songSeconds]);
 
+  const show = useCallback(
+    (seconds: number) =>
+      change((before) => {
+        const span = before.endSeconds - before.startSeconds;
+        const close = Math.min(span, Math.max(songSeconds / 8, shownSeconds));
+        const half = close / 2;
+        return centredOn(
+          { startSeconds: seconds - half, endSeconds: seconds + half },
+          seconds,
+          songSeconds,
+        );
+      }),
+    [change, songSeconds],
+  );
+
   const actions = {
     closer: () => change((before) => zoomed(before, closer, 0.5, songSeconds)),
     wider: () => change((before) => zoomed(before, wider, 0.5, songSeconds)),
@@ -76,5 +94,5 @@ export function useTimeView(songSeconds: number, sheet: RefObject<HTMLElement | 
     action();
     event.preventDefault();
   };
-  return { view, isWhole: chosen === null, actions, onKeyDown };
+  return { view, isWhole: chosen === null, actions, show, onKeyDown };
 }
