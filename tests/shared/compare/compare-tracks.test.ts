@@ -21,12 +21,12 @@ beforeAll(async () => {
       decodeMono(`${recordings}/${name}.flac`),
     ),
   )) as [Float32Array, Float32Array, Float32Array];
-});
+}, 60_000);
 
 const gained = (sound: Float32Array, gain: number): Float32Array =>
   sound.map((sample) => sample * gain);
 
-describe('compareTracks: the same audio', () => {
+describe('compareTracks: the same audio', { timeout: 60_000 }, () => {
   it('finds a copy that is quieter and later, by how much and how exactly', async () => {
     const sounds = comparedSounds({
       'Loop.wav': [atBits(placed(loop, 48_000, frames), 24)],
@@ -115,7 +115,7 @@ describe('compareTracks: the same audio', () => {
     expect((user + system) / 1e6).toBeLessThan(4);
     // All 4,950 pairs read would be more than 400 million frames.
     expect(sounds.framesRead()).toBeLessThan(5_000_000);
-  }, 60_000);
+  });
 
   it('leaves out a file that has gone, and stops when told to', async () => {
     const sound = placed(loop, 0, frames);
@@ -128,7 +128,7 @@ describe('compareTracks: the same audio', () => {
   });
 });
 
-describe('compareTracks: left and right as two files', () => {
+describe('compareTracks: left and right as two files', { timeout: 60_000 }, () => {
   it('measures how alike they are', async () => {
     const sound = placed(piano, 5_000, frames);
     const sounds = comparedSounds({
