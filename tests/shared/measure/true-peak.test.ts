@@ -1,8 +1,15 @@
 import { readFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import { describe, expect, it } from 'vitest';
+import { measureTruePeak } from '#shared/measure/oracle/measure-true-peak.ts';
 import { recordingsFolder } from '../../../server/dev/test-tools.mjs';
-import { floatMono, measureBytes, measureSamples, sampled } from '../../support/measuring.ts';
+import {
+  floatMono,
+  measureBytes,
+  measureSamples,
+  noise,
+  sampled,
+} from '../../support/measuring.ts';
 import { inPairs, run, runForMessages, withFolder } from '../../support/outside-programs.ts';
 
 /** A second at 48 kHz that comes and goes in 10 ms: a tone cut hard has other true peaks. */
@@ -40,6 +47,30 @@ describe('true peak', () => {
     const { truePeakDbtp } = await measureSamples(floatMono(spike));
     expect(truePeakDbtp).toBeCloseTo(20 * Math.log10(Math.fround(0.7)), 12);
     expect((await measureSamples(floatMono(new Float64Array(4000)))).truePeakDbtp).toBeNull();
+  });
+
+  it('is found behind a spike that is hardly lower', async () => {
+    // Most samples are passed over because they cannot beat the peak so far: none too many.
+    const random = noise(4);
+    const sounds: Record<string, Float64Array> = {
+      'a quarter of the rate': tone(0.4, 1 / 4, 45),
+      'a sixth': tone(0.4, 1 / 6, 60),
+      'a third': tone(0.4, 1 / 3, 30),
+      'a low note': tone(0.4, 1 / 480, 1),
+      'a high note': tone(0.4, 0.4583, 10),
+      noise: sampled(48_000, () => 0.4 * random()),
+      'single steps': sampled(48_000, () => (random() < 0 ? -0.4 : 0.4)),
+    };
+    for (const [name, sound] of Object.entries(sounds)) {
+      const peak = measureTruePeak(sound.map(Math.fround));
+      for (const share of [0.9, 0.99, 0.9999]) {
+        const samples = new Float64Array(3000 + sound.length);
+        samples[100] = share * peak;
+        samples.set(sound, 3000);
+        const { truePeakDbtp } = await measureSamples(floatMono(samples));
+        expect(truePeakDbtp, `${name} behind ${share}`).toBe(20 * Math.log10(peak));
+      }
+    }
   });
 
   it('is what ffmpeg finds in recordings, within the 0.3 dB of EBU R 128', async () => {
