@@ -196,11 +196,26 @@ export class Bench {
 
   /** Lays the zip out: its name and exact size, before a byte is made. */
   readonly prepare = async (): Promise<{ fileName: string; bytes: number }> => {
+    await this.repairsWorkedOut();
     const { check, repaired, report } = this.state;
-    if (!check || !repaired || !report) throw new AppError('conflict');
+    if (!check || !repaired || !report) throw this.state.failure ?? new AppError('conflict');
     const worker = await this.sessionWorker();
     return worker.call('prepare', { files: this.files, check, repaired, report });
   };
+
+  /** Saving may be asked for while a repair that was just chosen is still worked out. */
+  private repairsWorkedOut(): Promise<void> {
+    return new Promise((resolve) => {
+      const look = (): void => {
+        const { check, repaired, failure } = this.state;
+        if (check && !repaired && failure === null) return;
+        stop();
+        resolve();
+      };
+      const stop = this.subscribe(look);
+      look();
+    });
+  }
 
   readonly sessionWorker = (): Promise<SessionWorker> => this.workers.session();
 
