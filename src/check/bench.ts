@@ -197,8 +197,9 @@ export class Bench {
   /** Lays the zip out: its name and exact size, before a byte is made. */
   readonly prepare = async (): Promise<{ fileName: string; bytes: number }> => {
     await this.repairsWorkedOut();
-    const { check, repaired, report } = this.state;
-    if (!check || !repaired || !report) throw this.state.failure ?? new AppError('conflict');
+    const { check, repaired, report, failure } = this.state;
+    if (failure instanceof Error) throw failure;
+    if (!check || !repaired || !report) throw new AppError('conflict');
     const worker = await this.sessionWorker();
     return worker.call('prepare', { files: this.files, check, repaired, report });
   };
