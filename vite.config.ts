@@ -1,10 +1,31 @@
 import tailwindcss from '@tailwindcss/vite';
 import react from '@vitejs/plugin-react';
-import { defineConfig } from 'vite';
+import { createHash } from 'node:crypto';
+import { defineConfig, type Plugin } from 'vite';
+
+/**
+ * Tells the service worker which files the application consists of, so that it opens without a
+ * network.
+ */
+function tellServiceWorker(): Plugin {
+  return {
+    name: 'tell-service-worker',
+    apply: 'build',
+    enforce: 'post',
+    generateBundle(_, bundle) {
+      const worker = bundle['service-worker.js'];
+      if (worker?.type !== 'chunk') return;
+      const built = Object.keys(bundle).filter((file) => /^assets\/.*(?<!\.map)$/.test(file));
+      const files = [...built.map((file) => `/${file}`), '/theme.js', '/icon.svg'].sort();
+      const version = createHash('sha256').update(files.join()).digest('hex').slice(0, 16);
+      worker.code = `self.flightcaseShell=${JSON.stringify({ version, files })};\n${worker.code}`;
+    },
+  };
+}
 
 /** The browser client. Server and command line are built by server/dev/build.mjs. */
 export default defineConfig({
-  plugins: [react(), tailwindcss()],
+  plugins: [react(), tailwindcss(), tellServiceWorker()],
   publicDir: 'src/public',
   build: {
     outDir: 'dist/client',

@@ -10,17 +10,17 @@ type BarsFieldsProps = {
 
 type Unit = SessionInformation['metre']['unit'];
 const units: { value: `${Unit}`; label: string }[] = [
-  { value: '2', label: 'halves (…/2)' },
-  { value: '4', label: 'quarters (…/4)' },
-  { value: '8', label: 'eighths (…/8)' },
-  { value: '16', label: 'sixteenths (…/16)' },
+  { value: '2', label: 'half note' },
+  { value: '4', label: 'quarter' },
+  { value: '8', label: 'eighth' },
+  { value: '16', label: 'sixteenth' },
 ];
 
 /** How bars are counted: metre, the number of the first one, count-in. */
 export function BarsFields({ information, onChange }: BarsFieldsProps) {
   const { metre, startBar, countInBars } = information;
   return (
-    <div className="grid grid-cols-2 gap-4">
+    <div className="grid grid-cols-2 items-end gap-4 sm:grid-cols-4">
       <WholeNumber
         label="Beats in a bar"
         value={metre.beats}
@@ -28,7 +28,7 @@ export function BarsFields({ information, onChange }: BarsFieldsProps) {
         to={32}
         onChange={(beats) => onChange({ metre: { ...metre, beats } })}
       />
-      <Field label="Counted in">
+      <Field label="A beat is a">
         {(control) => (
           <Select
             {...control}

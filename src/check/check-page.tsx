@@ -8,6 +8,7 @@ import { editionQuery } from '../routes/rules/rules.tsx';
 import { LoadingState } from '../ui/states.tsx';
 import { BenchScreen } from './bench-screen.tsx';
 import { unpublishedRules, type CheckRules } from './check-rules.ts';
+import { useOffline } from './use-offline.ts';
 import { projectRulesQuery } from './project-rules.ts';
 
 /**
@@ -17,6 +18,7 @@ import { projectRulesQuery } from './project-rules.ts';
  */
 export function CheckPage() {
   usePageTitle('Check a folder');
+  useOffline();
   const [params] = useSearchParams();
   const projectId = params.get('project');
   const edition = useEditionOf(projectId, params.get('rules'));

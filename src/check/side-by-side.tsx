@@ -1,4 +1,4 @@
-import { memo, useEffect, useMemo, useRef, type ReactNode } from 'react';
+import { memo, useEffect, useMemo, useRef, useState, type ReactNode, type RefObject } from 'react';
 import type { Overview } from '#shared/measure/overview.ts';
 import { Button } from '../ui/button.tsx';
 import { Strip, StripRuler, StripSheet } from '../ui/strip.tsx';
@@ -34,6 +34,7 @@ export function SideBySide({ view: session, overviews, place, onFinding }: SideB
   const { view, isWhole, actions, show, onKeyDown } = useTimeView(songSeconds, sheet);
   const shared = useMemo(() => sharedMarks(session), [session]);
   useShownPlace(place, show);
+  const isNarrow = useIsNarrow(sheet);
   return (
     <div
       ref={sheet}
@@ -73,7 +74,7 @@ export function SideBySide({ view: session, overviews, place, onFinding }: SideB
         </Button>
       </div>
       <StripSheet endLine={isWhole}>
-        <StripRuler marks={rulerMarks(view, barGrid(session))} />
+        <StripRuler marks={rulerMarks(view, barGrid(session), isNarrow ? 3 : 9)} />
         {tracks.map((file) => (
           <TrackStrip
             key={file.path}
@@ -89,6 +90,19 @@ export function SideBySide({ view: session, overviews, place, onFinding }: SideB
       </StripSheet>
     </div>
   );
+}
+
+/** Whether the sheet is as narrow as on a phone, where eight times do not fit side by side. */
+function useIsNarrow(sheet: RefObject<HTMLElement | null>): boolean {
+  const [isNarrow, setIsNarrow] = useState(false);
+  useEffect(() => {
+    const element = sheet.current;
+    if (!element) return;
+    const sizes = new ResizeObserver(() => setIsNarrow(element.clientWidth < 640));
+    sizes.observe(element);
+    return () => sizes.disconnect();
+  }, [sheet]);
+  return isNarrow;
 }
 
 /** One object for all strips without such marks, so that they are not drawn again for nothing. */

@@ -27,15 +27,8 @@ export function SongDetails({ information, rules, tracks, onChange, onForget }: 
     <div className="grid max-w-6xl gap-x-12 gap-y-7 lg:grid-cols-2">
       <div className="flex flex-col gap-6">
         <NameFields information={information} onChange={onChange} />
-        <div className="grid gap-x-8 gap-y-4 sm:grid-cols-[auto_minmax(0,1fr)]">
-          <TempoField
-            tempo={information.tempo}
-            onChange={(tempo) => {
-              onChange({ tempo });
-            }}
-          />
-          <BarsFields information={information} onChange={onChange} />
-        </div>
+        <TempoField tempo={information.tempo} onChange={(tempo) => onChange({ tempo })} />
+        <BarsFields information={information} onChange={onChange} />
         <Field
           label="Notes for the engineer"
           optional

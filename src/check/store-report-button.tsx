@@ -8,7 +8,7 @@ import { errorText } from '../app/error-text.ts';
 import { useSession } from '../app/session-query.ts';
 import { Button } from '../ui/button.tsx';
 import { downloadReport } from './download-report.ts';
-import { storeCheck } from './store-report.ts';
+import { storeOrWait } from './waiting-checks.ts';
 
 type StoreReportProps = {
   report: CheckReport;
@@ -32,7 +32,7 @@ export function StoreReport({
   const submissionId = useMemo(() => (report ? crypto.randomUUID() : ''), [report]);
   const storing = useMutation({
     mutationFn: (toProject: string) =>
-      storeCheck({
+      storeOrWait({
         submissionId,
         projectId: toProject,
         songTitle,
@@ -50,6 +50,14 @@ export function StoreReport({
         <Link to={`/reports/${storing.data.id}`} className="text-link">
           Open it
         </Link>
+      </span>
+    );
+  }
+  if (storing.data === null) {
+    return (
+      <span role="status" className="max-w-72 self-center text-small">
+        The server cannot be reached. The report waits in this browser and is stored as soon as the
+        bench is open with a connection.
       </span>
     );
   }

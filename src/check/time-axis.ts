@@ -25,10 +25,10 @@ export function secondsPerBar({ bpm, beatsPerBar, beatUnit }: BarGrid): number {
 }
 
 /**
- * About eight marks over the visible stretch, at whole bars where there is a tempo, otherwise (or
+ * About eight marks (fewer where there is no room) over the visible stretch, at whole bars where there is a tempo, otherwise (or
  * when less than two bars are in view) at round times. Steps of bars double.
  */
-export function rulerMarks(view: TimeView, grid: BarGrid | null): RulerMark[] {
+export function rulerMarks(view: TimeView, grid: BarGrid | null, mostMarks = 9): RulerMark[] {
   const span = view.endSeconds - view.startSeconds;
   if (!(span > 0)) return [];
   const bars = grid && span >= 2 * secondsPerBar(grid) ? grid : null;
@@ -36,7 +36,7 @@ export function rulerMarks(view: TimeView, grid: BarGrid | null): RulerMark[] {
   const steps = bars
     ? Array.from({ length: 16 }, (_, power) => 2 ** power)
     : [0.01, 0.02, 0.05, 0.1, 0.2, 0.5, 1, 2, 5, 10, 15, 30, 60, 120, 300, 600, 1800, 3600];
-  const step = steps.find((candidate) => span / (candidate * unit) <= 9) ?? steps.at(-1)!;
+  const step = steps.find((candidate) => span / (candidate * unit) <= mostMarks) ?? steps.at(-1)!;
   const marks: RulerMark[] = [];
   const first = Math.ceil((view.startSeconds / (step * unit)) * (1 - 1e-12) - 1e-9);
   for (let index = first; ; index++) {

@@ -1,18 +1,31 @@
 /// <reference lib="webworker" />
+import { answerFromShell, dropOldShells, keepShell, type AppShell } from './app-shell.ts';
 import { streamFromPort } from './stream-port.ts';
 import { downloadPrefix, type DownloadOffer } from './download-offer.ts';
 
 /**
- * Turns a stream made in a tab into an ordinary download, for browsers without a save picker:
+ * Keeps the application for times without a network, and turns a stream made in a tab into an ordinary download, for browsers without a save picker:
  * the page offers a stream under an address, then opens that address; the bytes go to disk as
  * they come and are never held in memory or stored twice.
  */
-declare const self: ServiceWorkerGlobalScope;
+declare const self: ServiceWorkerGlobalScope & {
+  /** Put in front of this file by the build (vite.config.ts); not there in development. */
+  flightcaseShell?: AppShell;
+};
+
+const shell = self.flightcaseShell;
 
 const offers = new Map<string, DownloadOffer>();
 
-self.addEventListener('install', () => void self.skipWaiting());
-self.addEventListener('activate', (event) => event.waitUntil(self.clients.claim()));
+self.addEventListener('install', (event) => {
+  void self.skipWaiting();
+  // Downloads do not wait for this: a worker that waits is not there when a zip is saved.
+  if (shell) void keepShell(shell);
+  event.waitUntil(Promise.resolve());
+});
+self.addEventListener('activate', (event) => {
+  event.waitUntil(Promise.all([self.clients.claim(), shell && dropOldShells(shell)]));
+});
 
 self.addEventListener('message', (event: ExtendableMessageEvent) => {
   const message = event.data as DownloadOffer | { kind: 'keep-alive' };
@@ -24,7 +37,12 @@ self.addEventListener('message', (event: ExtendableMessageEvent) => {
 
 self.addEventListener('fetch', (event: FetchEvent) => {
   const url = new URL(event.request.url);
-  if (url.origin !== self.location.origin || !url.pathname.startsWith(downloadPrefix)) return;
+  if (url.origin !== self.location.origin) return;
+  if (!url.pathname.startsWith(downloadPrefix)) {
+    const answer = shell && answerFromShell(shell, event.request);
+    if (answer) event.respondWith(answer);
+    return;
+  }
   const id = url.pathname.slice(downloadPrefix.length).split('/')[0]!;
   const offer = offers.get(id);
   if (!offer) {
