@@ -85,10 +85,11 @@ function* silence(
   signal?: AbortSignal,
 ): Generator<Uint8Array, void, void> {
   const perBlock = Math.max(1, Math.floor(silenceBytes / frameBytes));
+  if (frames <= 0) return;
+  const block = new Uint8Array(Math.min(frames, perBlock) * frameBytes).fill(silenceByte(form));
   for (let left = frames; left > 0; left -= perBlock) {
     signal?.throwIfAborted();
-    const block = new Uint8Array(Math.min(left, perBlock) * frameBytes);
-    yield block.fill(silenceByte(form));
+    yield block.subarray(0, Math.min(left, perBlock) * frameBytes);
   }
 }
 
@@ -155,8 +156,9 @@ async function* channelFrames(
   const one = find(operations, 'take-channel');
   const width = bytesPerSample(audio.form);
   if (one) {
+    const { channels } = first.format;
     for await (const block of sourceFrames(first, fromFrame, signal)) {
-      yield takeChannel(block, one.channel, first.format.channels, width);
+      yield takeChannel(block, one.channel, channels, width);
     }
     return;
   }
@@ -167,14 +169,19 @@ async function* channelFrames(
   yield* joined(sources, audio.form, fromFrame, signal);
 }
 
-function takeChannel(block: Uint8Array, channel: number, channels: number, width: number) {
+/** Moves the samples of one channel to the front of the block, over the others. */
+function takeChannel(
+  block: Uint8Array,
+  channel: number,
+  channels: number,
+  width: number,
+): Uint8Array {
   const frames = block.length / (channels * width);
-  const taken = new Uint8Array(frames * width);
-  for (let frame = 0; frame < frames; frame++) {
-    const from = (frame * channels + channel) * width;
-    for (let i = 0; i < width; i++) taken[frame * width + i] = block[from + i]!;
+  const step = channels * width;
+  for (let to = 0, from = channel * width; to < frames * width; from += step - width) {
+    for (const end = to + width; to < end;) block[to++] = block[from++]!;
   }
-  return taken;
+  return block.subarray(0, frames * width);
 }
 
 /** Left and right, taken in step; the shorter one goes on as silence. */
@@ -188,6 +195,7 @@ async function* joined(
   const sides = sources.map((source) => sourceFrames(source, fromFrame, signal));
   const held: Uint8Array[] = sides.map(() => new Uint8Array(0));
   const ended = sides.map(() => false);
+  let buffer = new Uint8Array(0);
   try {
     for (;;) {
       for (const [side, stream] of sides.entries()) {
@@ -199,7 +207,8 @@ async function* joined(
       const waiting = held.filter((block) => block.length > 0);
       if (waiting.length === 0) return;
       const frames = Math.min(...waiting.map((block) => block.length / width));
-      const both = new Uint8Array(2 * frames * width).fill(silenceByte(form));
+      if (buffer.length < 2 * frames * width) buffer = new Uint8Array(2 * frames * width);
+      const both = buffer.subarray(0, 2 * frames * width).fill(silenceByte(form));
       for (const [side, block] of held.entries()) {
         if (block.length === 0) continue;
         for (let frame = 0; frame < frames; frame++) {

@@ -16,8 +16,8 @@ export function formOf({ format }: Pick<TrackSource, 'format'>): SampleForm {
 
 /**
  * The sample data of a source from `fromFrame` to its end, in whole frames, in the form a WAV
- * file has. Blocks are ours: they may be changed by whoever takes them, and stay valid.
- * A source that ends early ends the stream early.
+ * file has. A block may be changed by whoever takes it, and is valid until the next one is asked
+ * for. A source that ends early ends the stream early.
  */
 export async function* sourceFrames(
   track: TrackSource,
@@ -28,25 +28,35 @@ export async function* sourceFrames(
   const frameBytes = layout.bytesPerFrame;
   let left = (format.frames - fromFrame) * frameBytes;
   if (left <= 0) return;
-  let carried = new Uint8Array(0);
+  // One buffer for all blocks: what is left of a frame waits at its front for the rest.
+  let buffer = new Uint8Array(0);
+  let waiting = 0;
   const start = layout.dataOffset + fromFrame * frameBytes;
   for await (const block of track.source.stream(start, signal)) {
     signal?.throwIfAborted();
     const fresh = block.length > left ? block.subarray(0, left) : block;
     left -= fresh.length;
-    const usable = carried.length + fresh.length;
+    const usable = waiting + fresh.length;
+    buffer = withRoom(buffer, usable, waiting);
+    buffer.set(fresh, waiting);
     const whole = usable - (usable % frameBytes);
-    const joined = new Uint8Array(usable);
-    joined.set(carried);
-    joined.set(fresh, carried.length);
-    carried = joined.slice(whole);
     if (whole > 0) {
-      const frames = joined.subarray(0, whole);
+      const frames = buffer.subarray(0, whole);
       toWaveForm(frames, track);
       yield frames;
+      buffer.copyWithin(0, whole, usable);
     }
+    waiting = usable - whole;
     if (left === 0) return;
   }
+}
+
+/** A buffer of at least `bytes`, with the first `kept` bytes of the old one. */
+function withRoom(buffer: Uint8Array, bytes: number, kept: number): Uint8Array<ArrayBuffer> {
+  if (buffer.length >= bytes) return buffer as Uint8Array<ArrayBuffer>;
+  const larger = new Uint8Array(bytes);
+  larger.set(buffer.subarray(0, kept));
+  return larger;
 }
 
 /**
