@@ -68,7 +68,7 @@ async function walk(
       await walk(entry, `${path}/`, files);
       continue;
     }
-    const file = await (entry).getFile().catch((cause: unknown) => {
+    const file = await entry.getFile().catch((cause: unknown) => {
       // Gone between the listing and the look at it: it is not in the folder any more.
       if (cause instanceof DOMException && cause.name === 'NotFoundError') return null;
       throw cause;

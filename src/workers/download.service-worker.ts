@@ -4,9 +4,10 @@ import { streamFromPort } from './stream-port.ts';
 import { downloadPrefix, type DownloadOffer } from './download-offer.ts';
 
 /**
- * Keeps the application for times without a network, and turns a stream made in a tab into an ordinary download, for browsers without a save picker:
- * the page offers a stream under an address, then opens that address; the bytes go to disk as
- * they come and are never held in memory or stored twice.
+ * Keeps the application for times without a network, and turns a stream made in a tab into an
+ * ordinary download, for browsers without a save picker: the page offers a stream under an
+ * address, then opens that address; the bytes go to disk as they come and are never held in
+ * memory or stored twice.
  */
 declare const self: ServiceWorkerGlobalScope & {
   /** Put in front of this file by the build (vite.config.ts); not there in development. */
