@@ -37,7 +37,7 @@ export const floorShare = 0.1;
 export const shortestRun = 3;
 
 /** Cycles that are looked at to tell clipping from a sound that is flat by design. */
-export const mostCycles = 5000;
+export const mostCycles = 2000;
 
 /** How far samples at one ceiling may lie apart: two steps of 16 bits, as dither leaves them. */
 export function clippingTolerance(format: TrackFormat): number {

@@ -40,7 +40,7 @@ const clippingSchema = z.strictObject({
   fullScaleRuns: z.number().int().nonnegative(),
   /**
    * Share (0 to 1) of the waveform's cycles whose top is flat at whatever level, among the first
-   * 5,000 above -34 dBFS from the first run on: near 1 is flat by design. 0 without runs.
+   * 2,000 above -34 dBFS from the first run on: near 1 is flat by design. 0 without runs.
    */
   flatCycleShare: z.number().min(0).max(1),
   ranges: z.array(frameRangeSchema).max(maxPlaces),

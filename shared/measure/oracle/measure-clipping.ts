@@ -20,7 +20,7 @@ import type { RawClipping } from '../raw-measures.ts';
  * a parabola: if a run of n samples differs by d within itself, the next samples can differ from
  * its top by d * ((n + 1) / (n - 1))^2 at most, and by a step for rounding.
  *
- * From the first run on, 5,000 cycles (stretches on one side of zero) above -34 dBFS are counted,
+ * From the first run on, 2,000 cycles (stretches beyond -34 dBFS on one side of zero) are counted,
  * and those among them whose top is flat at whatever level.
  */
 export function measureClipping(samples: Float64Array, format: TrackFormat): RawClipping {
@@ -117,7 +117,7 @@ function keepRun(side: Side, fullScale: number): void {
 type Cycles = {
   count: number;
   flatCount: number;
-  /** The cycle that is going on: its side, its peak, the highest flat run on it. */
+  /** The cycle that is going on: its side (0: none), its peak, the highest flat run on it. */
   sign: number;
   peak: number;
   flatLevel: number;
@@ -138,14 +138,16 @@ function countCycles(
   step: number,
 ): void {
   const { run } = cycles;
-  if (run.length > 0 && Math.abs(sample - run.first) <= tolerance) {
+  const isLoud = Math.abs(sample) > clippingFloor;
+  if (isLoud && run.length > 0 && Math.abs(sample - run.first) <= tolerance) {
     extendRun(run, sample);
   } else {
     endFlatRun(cycles, sample, step);
-    Object.assign(run, { length: 1, before, low: sample, high: sample, first: sample });
+    const length = isLoud ? 1 : 0;
+    Object.assign(run, { length, before, low: sample, high: sample, first: sample });
   }
-  const sign = Math.sign(sample);
-  if (sign !== 0 && sign !== cycles.sign) {
+  const sign = isLoud ? Math.sign(sample) : 0;
+  if (sign !== cycles.sign) {
     endCycle(cycles, tolerance);
     Object.assign(cycles, { sign, peak: 0, flatLevel: 0 });
   }
@@ -154,7 +156,7 @@ function countCycles(
 
 function endFlatRun(cycles: Cycles, after: number, step: number): void {
   const { run } = cycles;
-  if (run.length < shortestRun || Math.abs(run.first) <= clippingFloor) return;
+  if (run.length < shortestRun) return;
   const sign = Math.sign(run.first);
   const upright = {
     ...run,
@@ -168,7 +170,7 @@ function endFlatRun(cycles: Cycles, after: number, step: number): void {
 }
 
 function endCycle(cycles: Cycles, tolerance: number): void {
-  if (cycles.peak <= clippingFloor) return;
+  if (cycles.sign === 0) return;
   cycles.count++;
   if (cycles.flatLevel >= cycles.peak - tolerance) cycles.flatCount++;
 }

@@ -2,7 +2,7 @@ import { larger } from './extremes';
 import { allocate } from './arena';
 import { granuleFrames } from './block';
 import { Channel } from './channel';
-import { countCycles, isCounting, resetCycles } from './cycles';
+import { countCycles, isCounting, isInCycle, passCycles, resetCycles } from './cycles';
 import { blockHighest, blockLowest, highest, lowest } from './levels';
 import { clippingFloor, clippingTolerance, fullScaleLevel, shortestRun } from './parameters';
 import { addPlace, newPlaces, Places } from './places';
@@ -40,17 +40,20 @@ export function newSide(sign: f64): Side {
 }
 
 export function findClipping<T extends number>(channel: Channel, start: f64, frames: i32): void {
-  const counting = isCounting(channel.cycles);
-  if (!counting && !touchesCeiling(channel, blockLowest, blockHighest)) return;
+  if (!asksForSamples(channel, blockLowest, blockHighest)) return;
   for (let first = 0; first < frames; first += granuleFrames) {
     const at = (<usize>(first / granuleFrames)) << 3;
-    const last = min(first + granuleFrames, frames);
-    if (isCounting(channel.cycles)) {
-      for (let i = first; i < last; i++) followSample<T>(channel, start, i);
-    } else if (touchesCeiling(channel, load<f64>(lowest + at), load<f64>(highest + at))) {
-      searchGranule<T>(channel, start, first, last);
-    }
+    if (!asksForSamples(channel, load<f64>(lowest + at), load<f64>(highest + at))) continue;
+    searchGranule<T>(channel, start, first, min(first + granuleFrames, frames));
   }
+}
+
+/** Whether something is going on that these samples would end, or they reach high enough. */
+function asksForSamples(channel: Channel, low: f64, high: f64): bool {
+  if (channel.upper.run.length > 0 || channel.lower.run.length > 0) return true;
+  if (reaches(channel.upper, high) || reaches(channel.lower, -low)) return true;
+  if (!isCounting(channel.cycles)) return false;
+  return isInCycle(channel.cycles) || high > clippingFloor || low < -clippingFloor;
 }
 
 /** Goes several samples at a time as long as they stay below both ceilings, or all at one. */
@@ -58,16 +61,23 @@ function searchGranule<T extends number>(channel: Channel, start: f64, from: i32
   const width = 16 / <i32>sizeof<T>();
   let i = from;
   while (i < to) {
-    if (i + width <= to && !isCounting(channel.cycles)) {
-      const samples = v128.load(channel.samples + <usize>i * sizeof<T>());
-      if (staysBelow<T>(channel, samples) || goesOn<T>(channel, samples)) {
-        i += width;
-        continue;
-      }
+    const at = channel.samples + <usize>i * sizeof<T>();
+    if (i + width <= to && canPass<T>(channel, at)) {
+      i += width;
+      continue;
     }
     const end = min(i + width, to);
     for (; i < end; i++) followSample<T>(channel, start, i);
   }
+}
+
+/** Takes in all samples of the vector at `at`, or leaves them to be looked at one by one. */
+function canPass<T extends number>(channel: Channel, at: usize): bool {
+  const samples = v128.load(at);
+  if (isCounting(channel.cycles)) {
+    return staysBelow<T>(channel, samples) && passCycles<T>(channel.cycles, at);
+  }
+  return staysBelow<T>(channel, samples) || goesOn<T>(channel, samples);
 }
 
 function staysBelow<T extends number>(channel: Channel, samples: v128): bool {
@@ -105,15 +115,6 @@ function justBelow(side: Side): f64 {
 /** Behind the file there is silence. */
 export function endClipping<T extends number>(channel: Channel, end: f64): void {
   follow(channel, end, 0, end > 0 ? sampleAt<T>(channel, -1) : 0);
-}
-
-function touchesCeiling(channel: Channel, low: f64, high: f64): bool {
-  return (
-    reaches(channel.upper, high) ||
-    reaches(channel.lower, -low) ||
-    channel.upper.run.length > 0 ||
-    channel.lower.run.length > 0
-  );
 }
 
 function reaches(side: Side, level: f64): bool {

@@ -10,7 +10,7 @@ export class Cycles {
   started: bool;
   count: f64;
   flatCount: f64;
-  /** The cycle that is going on. */
+  /** The cycle that is going on; 0: none. */
   sign: f64;
   peak: f64;
   flatLevel: f64;
@@ -39,22 +39,54 @@ export function isCounting(cycles: Cycles): bool {
   return cycles.started && cycles.count < mostCycles;
 }
 
+/** Whether a quiet sample would end something. */
+export function isInCycle(cycles: Cycles): bool {
+  return cycles.sign != 0;
+}
+
 export function countCycles(cycles: Cycles, sample: f64, before: f64): void {
   const run = cycles.run;
-  if (run.length > 0 && Math.abs(sample - cycles.first) <= clippingTolerance) {
+  const isLoud = Math.abs(sample) > clippingFloor;
+  if (isLoud && run.length > 0 && Math.abs(sample - cycles.first) <= clippingTolerance) {
     extendRun(run, upright(cycles.first, sample));
   } else {
     endFlatRun(cycles, sample);
     cycles.first = sample;
-    startRun(run, 0, upright(sample, before), upright(sample, sample));
+    if (isLoud) startRun(run, 0, upright(sample, before), upright(sample, sample));
+    else run.length = 0;
   }
-  if (sample != 0 && sample * cycles.sign <= 0) {
+  const sign: f64 = isLoud ? (sample < 0 ? -1 : 1) : 0;
+  if (sign != cycles.sign) {
     endCycle(cycles);
-    cycles.sign = sample < 0 ? -1 : 1;
+    cycles.sign = sign;
     cycles.peak = 0;
     cycles.flatLevel = 0;
   }
   cycles.peak = larger(cycles.peak, Math.abs(sample));
+}
+
+/**
+ * Takes in a vector of samples where nothing begins or ends: all are quiet, or all belong to the
+ * cycle that is going on and none lies near the one before. Answers whether that is so.
+ */
+export function passCycles<T extends number>(cycles: Cycles, at: usize): bool {
+  const run = cycles.run;
+  const samples = v128.load(at);
+  const loud = v128.gt<T>(v128.abs<T>(samples), v128.splat<T>(<T>(clippingFloor * 0.999999)));
+  if (cycles.sign == 0) return run.length == 0 && !v128.any_true(loud);
+  if (run.length != 1) return false;
+  const upright = cycles.sign > 0 ? samples : v128.neg<T>(samples);
+  const within = v128.gt<T>(upright, v128.splat<T>(<T>(clippingFloor * 1.000001)));
+  const steps = v128.abs<T>(v128.sub<T>(samples, v128.load(at - sizeof<T>())));
+  const steep = v128.gt<T>(steps, v128.splat<T>(<T>(clippingTolerance * 1.000001)));
+  if (!v128.all_true<i32>(v128.and(within, steep))) return false;
+  const last = at + 16 - sizeof<T>();
+  cycles.first = <f64>load<T>(last);
+  startRun(run, 0, cycles.sign * <f64>load<T>(last - sizeof<T>()), cycles.sign * cycles.first);
+  for (let place = at; place <= last; place += sizeof<T>()) {
+    cycles.peak = larger(cycles.peak, Math.abs(<f64>load<T>(place)));
+  }
+  return true;
 }
 
 /** `sample` seen from the side of zero on which `reference` is. */
@@ -64,14 +96,14 @@ function upright(reference: f64, sample: f64): f64 {
 
 function endFlatRun(cycles: Cycles, after: f64): void {
   const run = cycles.run;
-  if (run.length < shortestRun || Math.abs(cycles.first) <= clippingFloor) return;
+  if (run.length < shortestRun) return;
   if (!leavesSteeply(run, upright(cycles.first, after))) return;
   cycles.flatLevel = larger(cycles.flatLevel, run.high);
 }
 
 /** Counts the cycle that has ended. */
 export function endCycle(cycles: Cycles): void {
-  if (cycles.peak <= clippingFloor) return;
+  if (cycles.sign == 0) return;
   cycles.count += 1;
   if (cycles.flatLevel >= cycles.peak - clippingTolerance) cycles.flatCount += 1;
 }
