@@ -81,6 +81,14 @@ export const waitingBench: BenchState = {
   failure: null,
 };
 
+/** What a reading under way has not said yet. */
+export const unreadBench = {
+  reading: null,
+  repaired: null,
+  report: null,
+  readAgain: null,
+} as const;
+
 /** A finished check, as it was before the files are read again. */
 export type CheckedBench = {
   state: BenchState;

@@ -14,10 +14,17 @@ import type { FileToRead } from '../workers/file-to-read.ts';
 import { makeSampleFiles } from '../workers/sample-link.ts';
 import type { SessionWorker } from '../workers/session-link.ts';
 import { answered, answersStillAsked, repairsStillOpen } from './answers.ts';
-import { judgedFindings, waitingBench, type BenchState, type CheckedBench } from './bench-state.ts';
+import {
+  judgedFindings,
+  unreadBench,
+  waitingBench,
+  type BenchState,
+  type CheckedBench,
+} from './bench-state.ts';
 import type { ExcerptPlace } from './excerpts.ts';
 import { BenchWorkers } from './bench-workers.ts';
 import { isCopyOf, listIntake, zipAlone } from './intake-list.ts';
+import { LatestWork } from './latest-work.ts';
 import { measureFiles } from './measure-files.ts';
 import { forgetSong, recallSong, rememberSong } from './remembered-songs.ts';
 import { sampleSong } from './sample-session/sample-song.ts';
@@ -49,8 +56,7 @@ export class Bench {
   private measured = new Map<string, MeasuredFile>();
   private comparison: Comparison | null = null;
   private running: AbortController | null = null;
-  private repairing: AbortController | null = null;
-  private repairTimer: ReturnType<typeof setTimeout> | undefined;
+  private readonly repairing = new LatestWork();
   private readonly workers = new BenchWorkers();
 
   constructor(rules: HouseRules) {
@@ -78,10 +84,7 @@ export class Bench {
     void this.whileRunning((signal) => this.takeIn(folder, signal));
   };
 
-  /**
-   * The person exported again: reads the folder on the bench once more, or the one they picked
-   * because the browser does not let a page do that by itself. It is the same song in any case.
-   */
+  /** Reads the same song again: the folder on the bench, or the one that was picked instead. */
   readonly exportedAgain = (picked: HeldFolder | null): void => {
     const { held } = this;
     void this.whileRunning(async (signal) => {
@@ -94,8 +97,7 @@ export class Bench {
   readonly dropSample = (): void => {
     const { artist, title, bpm } = sampleSong;
     void this.whileRunning(async (signal) => {
-      this.held = null;
-      this.loose = [];
+      this.clear();
       this.set({
         ...waitingBench,
         phase: 'making-sample',
@@ -118,10 +120,7 @@ export class Bench {
     this.judge(0);
   };
 
-  /**
-   * A zip went to the browser's downloads, where a page cannot read it back: when a file of that
-   * name is dropped, it is compared with its list of checksums, and the bench stays as it is.
-   */
+  /** A zip of this name, when it is dropped, is only compared with its list of checksums. */
   readonly expectBack = (fileName: string): void => {
     this.handedOver = fileName;
   };
@@ -196,34 +195,21 @@ export class Bench {
 
   /** Lays the zip out: its name and exact size, before a byte is made. */
   readonly prepare = async (): Promise<{ fileName: string; bytes: number }> => {
-    await this.repairsWorkedOut();
+    // A repair that was chosen just now may still be worked out.
+    await this.repairing.settled();
     const { check, repaired, report, failure } = this.state;
-    if (failure instanceof Error) throw failure;
-    if (!check || !repaired || !report) throw new AppError('conflict');
+    if (!check || !repaired || !report) {
+      throw failure instanceof Error ? failure : new AppError('conflict');
+    }
     const worker = await this.sessionWorker();
     return worker.call('prepare', { files: this.files, check, repaired, report });
   };
-
-  /** Saving may be asked for while a repair that was just chosen is still worked out. */
-  private repairsWorkedOut(): Promise<void> {
-    return new Promise((resolve) => {
-      const look = (): void => {
-        const { check, repaired, failure } = this.state;
-        if (check && !repaired && failure === null) return;
-        stop();
-        resolve();
-      };
-      const stop = this.subscribe(look);
-      look();
-    });
-  }
 
   readonly sessionWorker = (): Promise<SessionWorker> => this.workers.session();
 
   close(): void {
     this.running?.abort();
-    this.repairing?.abort();
-    clearTimeout(this.repairTimer);
+    this.repairing.stop();
     this.workers.close();
   }
 
@@ -316,8 +302,8 @@ export class Bench {
     }
     this.files = files;
     this.comparison = null;
-    this.repairing?.abort();
-    this.set({ phase: 'measuring', failure: null, ...unread });
+    this.repairing.stop();
+    this.set({ phase: 'measuring', failure: null, ...unreadBench });
     const startedAt = performance.now();
     const bytes = await this.measure(files, signal);
     const measured = this.measuredFiles();
@@ -381,21 +367,13 @@ export class Bench {
   /** Judges at once, and works out what the chosen repairs make after a pause. */
   private judge(pauseMs: number, failure: unknown = null): void {
     if (!this.comparison) return;
-    const { rules } = this;
+    const { rules, comparison } = this;
     const { information, chosen } = this.state;
-    const check = judgeCheck(
-      { files: this.measuredFiles(), comparison: this.comparison },
-      rules,
-      information,
-    );
+    const measured = { files: this.measuredFiles(), comparison };
+    const check = judgeCheck(measured, rules, information);
     this.set({ check, view: viewCheck(check, information, rules), repaired: null });
-    this.repairing?.abort();
-    const repairing = new AbortController();
-    this.repairing = repairing;
-    clearTimeout(this.repairTimer);
-    this.repairTimer = setTimeout(
-      () => void this.repair(check, information, chosen, repairing.signal, failure),
-      pauseMs,
+    this.repairing.start(pauseMs, (signal) =>
+      this.repair(check, information, chosen, signal, failure),
     );
   }
 
@@ -419,6 +397,3 @@ export class Bench {
     }
   }
 }
-
-/** What a reading under way has not said yet. */
-const unread = { reading: null, repaired: null, report: null, readAgain: null } as const;
