@@ -5,7 +5,14 @@ export default defineConfig({
   test: {
     projects: [
       {
-        test: { name: 'shared', environment: 'node', include: ['tests/shared/**/*.test.ts'] },
+        test: {
+          name: 'shared',
+          environment: 'node',
+          include: ['tests/shared/**/*.test.ts'],
+          // Whole sessions are told and outside programs started, on machines that do other things.
+          testTimeout: 30_000,
+          hookTimeout: 60_000,
+        },
       },
       {
         test: { name: 'contracts', environment: 'node', include: ['tests/contracts/**/*.test.ts'] },

@@ -110,7 +110,8 @@ async function closeAll(sources: readonly OpenByteSource[]): Promise<void> {
 }
 
 function trackSources(tracks: readonly ReadTrack[], sources: readonly ByteSource[]): TrackSource[] {
-  return tracks.map(({ reading }, index) => ({
+  return tracks.map(({ file, reading }, index) => ({
+    path: file.path,
     source: sources[index]!,
     format: reading.format,
     layout: reading.layout,

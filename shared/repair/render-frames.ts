@@ -47,8 +47,7 @@ const silenceBytes = 1 << 18;
 /**
  * The audio of an entry from `fromFrame` (of the output) to its end, block by block, as it stands
  * in a WAV file. In source frames and in this order: channels, high-pass, gain, fades, then
- * silence in front and behind. Frames that a source no longer has come as silence, so that the
- * length is always the promised one; whoever writes the file compares checksums.
+ * silence in front and behind. Throws AppError `file-changed` where a source has become shorter.
  */
 export async function* renderFrames(
   operations: readonly Operation[],

@@ -1,9 +1,12 @@
 import type { ByteSource } from '../bytes/byte-source.ts';
+import { AppError } from '../errors.ts';
 import type { TrackFormat, WaveLayout } from '../wave/track-format.ts';
 import { bytesPerSample, decodeSamples, type SampleForm } from './sample-codec.ts';
 
 /** A readable track among the dropped files. */
 export type TrackSource = {
+  /** Named in the error when the file has changed. */
+  path?: string;
   source: ByteSource;
   format: TrackFormat;
   layout: WaveLayout;
@@ -17,7 +20,7 @@ export function formOf({ format }: Pick<TrackSource, 'format'>): SampleForm {
 /**
  * The sample data of a source from `fromFrame` to its end, in whole frames, in the form a WAV
  * file has. A block may be changed by whoever takes it, and is valid until the next one is asked
- * for. A source that ends early ends the stream early.
+ * for. Throws AppError `file-changed` where a source has fewer bytes than when it was read.
  */
 export async function* sourceFrames(
   track: TrackSource,
@@ -49,6 +52,7 @@ export async function* sourceFrames(
     waiting = usable - whole;
     if (left === 0) return;
   }
+  throw new AppError('file-changed', { path: track.path ?? '' });
 }
 
 /** A buffer of at least `bytes`, with the first `kept` bytes of the old one. */

@@ -1,6 +1,9 @@
 import { truncate } from 'node:fs/promises';
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
+import { bytesSource } from '#shared/bytes/byte-source.ts';
+import { AppError } from '#shared/errors.ts';
+import { renderEntry } from '#shared/repair/render-entry.ts';
 import type { Operation } from '#shared/repair/repair-plan.ts';
 import { readWave } from '#shared/wave/read-wave.ts';
 import {
@@ -10,7 +13,7 @@ import {
   type TestSamples,
 } from '../../support/audio-writer.ts';
 import { run, withFolder } from '../../support/outside-programs.ts';
-import { allBytes, rendered, savedIn, soxSamples } from '../../support/rendering.ts';
+import { allBytes, droppedBytes, rendered, savedIn, soxSamples } from '../../support/rendering.ts';
 
 type Form = Pick<TestSamples, 'encoding' | 'bits' | 'containerBits'>;
 
@@ -280,6 +283,21 @@ describe('renderEntry as a source', () => {
         },
       ),
       { numRuns: 60 },
+    );
+  });
+
+  it('does not put silence where a file has become shorter', async () => {
+    const shorter = { ...droppedBytes('Organ.wav', stereo.subarray(0, 4000)), size: stereo.length };
+    const reading = await readWave(bytesSource(stereo), 'Organ.wav');
+    if (reading.kind !== 'track') throw new Error('no track');
+    const entry = {
+      ...{ from: ['Organ.wav'], to: 'Organ.wav', folder: '' as const, rewriteAsWav: true },
+      operations: [{ kind: 'pad' as const, toFrames: 2000 }],
+    };
+    const track = { file: shorter, reading, crc32: null };
+    const source = await (await renderEntry(entry, [track])).open();
+    await expect(allBytes(source)).rejects.toEqual(
+      new AppError('file-changed', { path: 'Organ.wav' }),
     );
   });
 
