@@ -8,6 +8,10 @@ import { writeSparseWave } from '../support/sparse-wave.ts';
 
 /** Workers that end, work that is stopped, and a tab that is put to sleep. */
 
+// What the service worker keeps for times without a network would answer for the scripts that
+// are made to fail here.
+test.use({ serviceWorkers: 'block' });
+
 const longName = 'A long take';
 
 /** One file that takes a while to read, and two that do not. */
