@@ -94,6 +94,8 @@ async function standInForPicker(page: Page): Promise<void> {
     Object.assign(window, {
       showSaveFilePicker: async ({ suggestedName }: { suggestedName: string }) => {
         const root = await navigator.storage.getDirectory();
+        // What was saved before would count against what the origin may keep.
+        await root.removeEntry(suggestedName).catch(() => undefined);
         return root.getFileHandle(suggestedName, { create: true });
       },
     });
@@ -119,7 +121,9 @@ async function timeSaving(page: Page, browserPid: number, isDone: RegExp): Promi
     startedAt = performance.now();
     await anyway.click();
   }
-  await page.getByText(isDone).waitFor({ timeout: patienceMs });
+  const failure = page.getByRole('alert');
+  await page.getByText(isDone).or(failure).first().waitFor({ timeout: patienceMs });
+  if (await failure.isVisible()) throw new Error(await failure.innerText());
   const wallSeconds = (performance.now() - startedAt) / 1000;
   return { wallSeconds, cpuSeconds: (await cpuSecondsOf(browserPid)) - cpuBefore };
 }
