@@ -3,6 +3,7 @@ import { basename, relative, resolve, sep } from 'node:path';
 import type { DroppedFile } from '#shared/bytes/byte-source.ts';
 import { isZip, openZip, type ZipProblemReason } from '#shared/bytes/zip-source.ts';
 import { AppError } from '#shared/errors.ts';
+import { zipProblemWords } from '#shared/session/zip-problem-words.ts';
 import { withoutCommonFolder } from '#shared/session/common-folder.ts';
 import { isJunk } from '#shared/session/junk-files.ts';
 import { listFolder, openNodeFile, type FolderProblem } from './node-files.ts';
@@ -60,22 +61,6 @@ async function readFolder(
   };
 }
 
-const zipReasons: Record<ZipProblemReason, string> = {
-  'absolute-path': 'its name leads out of the folder',
-  'parent-folder': 'its name leads out of the folder',
-  'drive-letter': 'its name leads out of the folder',
-  backslash: 'its name holds a backslash',
-  'nul-in-name': 'it has no usable name',
-  'no-name': 'it has no usable name',
-  symlink: 'a link is not followed',
-  'special-file': 'it is no ordinary file',
-  encrypted: 'it is encrypted',
-  'nested-zip': 'a zip within a zip is not opened',
-  'unknown-compression': 'it is packed in a way that cannot be read here',
-  'name-repeated': 'another file in the zip has the same name',
-  'damaged-entry': 'the zip is damaged there',
-};
-
 /** Entries that are there and cannot be read: one of them may be a track, so they are checked. */
 const closedReasons = new Set<ZipProblemReason>([
   'encrypted',
@@ -96,7 +81,7 @@ async function readZip(root: string): Promise<Omit<Intake, 'roughMix'>> {
   const closed = problems.filter(({ reason }) => closedReasons.has(reason)).map(closedFile);
   return {
     files: withoutCommonFolder([...files, ...closed], isJunk),
-    problems: problems.map(({ path, reason }) => ({ path, reason: zipReasons[reason] })),
+    problems: problems.map(({ path, reason }) => ({ path, reason: zipProblemWords[reason] })),
     root,
     isFolder: false,
   };

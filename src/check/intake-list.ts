@@ -1,4 +1,4 @@
-import type { ZipProblem } from '#shared/bytes/zip-source.ts';
+import { zipProblemWords } from '#shared/session/zip-problem-words.ts';
 import { withoutCommonFolder } from '#shared/session/common-folder.ts';
 import { isJunk } from '#shared/session/junk-files.ts';
 import type { DroppedFolder } from '../browser/dropped-files.ts';
@@ -31,7 +31,7 @@ export async function listIntake(
   return {
     folderName: zipFile.name.replace(/\.zip$/i, ''),
     files: withoutCommonFolder(entries, isJunk),
-    problems: zip.problems.map(({ path, reason }) => ({ path, reason: zipReasons[reason] })),
+    problems: zip.problems.map(({ path, reason }) => ({ path, reason: zipProblemWords[reason] })),
   };
 }
 
@@ -50,19 +50,3 @@ export function isCopyOf(fileName: string, original: string): boolean {
       .replace(/ ?\(\d+\)$/, '');
   return bare(fileName) === bare(original);
 }
-
-const zipReasons: Record<ZipProblem['reason'], string> = {
-  'absolute-path': 'its name leads out of the folder',
-  'parent-folder': 'its name leads out of the folder',
-  'drive-letter': 'its name leads out of the folder',
-  backslash: 'its name holds a backslash',
-  'nul-in-name': 'it has no usable name',
-  'no-name': 'it has no usable name',
-  symlink: 'a link is not followed',
-  'special-file': 'it is no ordinary file',
-  encrypted: 'it is encrypted',
-  'nested-zip': 'a zip within a zip is not opened',
-  'unknown-compression': 'it is packed in a way that cannot be read here',
-  'name-repeated': 'another file in the zip has the same name',
-  'damaged-entry': 'the zip is damaged there',
-};
