@@ -37,6 +37,14 @@ const outlineCorrelation = 0.9;
  */
 const sortedCorrelation = 0.99;
 
+/**
+ * Bounds for sets of hundreds of files that all look alike, such as noise: real sessions stay far
+ * below. A file is held against its nearest neighbours by fingerprint, and of the pairs that
+ * remain those nearest to each other are slid along each other. A copy is among the first of both.
+ */
+const mostNeighbours = 100;
+const mostSlides = 1000;
+
 /** The loudest sample of each column, in time and in order of loudness. */
 type Outline = { peaks: Float64Array; sorted: Float64Array };
 
@@ -49,29 +57,34 @@ const quietestPeakDbfs = -80;
  * left out, because their hashes already say so.
  */
 export function matchCandidates(tracks: readonly ComparedTrack[]): MatchCandidate[] {
-  const prints = tracks.flatMap((track, order) => {
+  const prints: Print[] = tracks.flatMap((track, order) => {
     const print = fingerprint(track);
     return print === null ? [] : [{ track, order, ...print }];
   });
   prints.sort((a, b) => a.kind.localeCompare(b.kind) || a.crestDb - b.crestDb || a.order - b.order);
-  const outlines = new Map<string, Outline>();
-  const candidates: (MatchCandidate & { orders: [number, number] })[] = [];
+  const outlines = createOutlines();
+  const alike: { pair: [Print, Print]; apartDb: number }[] = [];
   prints.forEach((print, index) => {
-    for (let next = index + 1; next < prints.length; next += 1) {
-      const other = prints[next];
-      if (!other || other.kind !== print.kind) break;
-      if (other.crestDb - print.crestDb > crestToleranceDb) break;
+    for (const other of prints.slice(index + 1, index + 1 + mostNeighbours)) {
+      const apartDb = other.crestDb - print.crestDb;
+      if (other.kind !== print.kind || apartDb > crestToleranceDb) break;
       if (sameHash(print.track, other.track)) continue;
-      const [a, b] = print.order < other.order ? [print, other] : [other, print];
-      const shifts = likelyShifts(a.track, b.track, outlines);
-      if (shifts)
-        candidates.push({ first: a.track, second: b.track, shifts, orders: [a.order, b.order] });
+      const pair: [Print, Print] = print.order < other.order ? [print, other] : [other, print];
+      if (outlines.mayMatch(pair[0].track, pair[1].track)) alike.push({ pair, apartDb });
     }
   });
-  return candidates
-    .sort((a, b) => a.orders[0] - b.orders[0] || a.orders[1] - b.orders[1])
-    .map(({ first, second, shifts }) => ({ first, second, shifts }));
+  return alike
+    .sort((a, b) => a.apartDb - b.apartDb)
+    .slice(0, mostSlides)
+    .map(({ pair }) => pair)
+    .sort(([a, b], [c, d]) => a.order - c.order || b.order - d.order)
+    .flatMap(([{ track: first }, { track: second }]) => {
+      const shifts = likelyShifts(first, second, outlines);
+      return shifts ? [{ first, second, shifts }] : [];
+    });
 }
+
+type Print = { track: ComparedTrack; order: number; kind: string; crestDb: number };
 
 function fingerprint({
   format,
@@ -100,6 +113,45 @@ function sameHash(a: ComparedTrack, b: ComparedTrack): boolean {
     .every((hash, channel) => hash === b.measures.channelHashes[channel]);
 }
 
+/** Both outlines at the coarser resolution of the two, where they can tell anything. */
+type OutlinePair = { a: Outline; b: Outline; width: number };
+
+type Outlines = {
+  /** null: too quiet, or no overview, to say anything. */
+  pair(first: ComparedTrack, second: ComparedTrack): OutlinePair | null;
+  /** Whether the outlines could be of the same sound, wherever it stands in the files. */
+  mayMatch(first: ComparedTrack, second: ComparedTrack): boolean;
+};
+
+function createOutlines(): Outlines {
+  const known = new Map<string, Outline>();
+  const outlineOf = (path: string, overview: Overview, width: number): Outline => {
+    const key = `${width} ${path}`;
+    const made = known.get(key);
+    if (made) return made;
+    const peaks = coarserOutline(outline(overview), overview.framesPerColumn, width);
+    const fresh = { peaks, sorted: peaks.slice().sort().reverse() };
+    known.set(key, fresh);
+    return fresh;
+  };
+  const pair = (first: ComparedTrack, second: ComparedTrack): OutlinePair | null => {
+    if (!first.overview || !second.overview) return null;
+    const width = Math.max(first.overview.framesPerColumn, second.overview.framesPerColumn);
+    const a = outlineOf(first.path, first.overview, width);
+    const b = outlineOf(second.path, second.overview, width);
+    // Put in order of loudness, the first column is the highest.
+    const quieter = Math.min(a.sorted[0] ?? 0, b.sorted[0] ?? 0);
+    return quieter >= outlinePeakNeeded ? { a, b, width } : null;
+  };
+  return {
+    pair,
+    mayMatch(first, second) {
+      const both = pair(first, second);
+      return both === null || likeness(both.a.sorted, both.b.sorted) >= sortedCorrelation;
+    },
+  };
+}
+
 /**
  * Where the second may have the sound of the first: at the same place, where its first or last
  * sound is, or where the outlines agree best. null: the outlines show different sounds.
@@ -107,28 +159,14 @@ function sameHash(a: ComparedTrack, b: ComparedTrack): boolean {
 function likelyShifts(
   first: ComparedTrack,
   second: ComparedTrack,
-  outlines: Map<string, Outline>,
+  outlines: Outlines,
 ): number[] | null {
   const shifts = [0];
-  if (first.overview && second.overview) {
-    const width = Math.max(first.overview.framesPerColumn, second.overview.framesPerColumn);
-    const outlineOf = (track: ComparedTrack, overview: Overview): Outline => {
-      const key = `${width} ${track.path}`;
-      const known = outlines.get(key);
-      if (known) return known;
-      const peaks = coarserOutline(outline(overview), overview.framesPerColumn, width);
-      const made = { peaks, sorted: peaks.slice().sort().reverse() };
-      outlines.set(key, made);
-      return made;
-    };
-    const a = outlineOf(first, first.overview);
-    const b = outlineOf(second, second.overview);
-    if (Math.min(highest(a.peaks), highest(b.peaks)) >= outlinePeakNeeded) {
-      if (likeness(a.sorted, b.sorted) < sortedCorrelation) return null;
-      const { columns, correlation } = bestShift(a.peaks, b.peaks);
-      if (correlation < outlineCorrelation) return null;
-      shifts.push(columns * width);
-    }
+  const both = outlines.pair(first, second);
+  if (both) {
+    const { columns, correlation } = bestShift(both.a.peaks, both.b.peaks);
+    if (correlation < outlineCorrelation) return null;
+    shifts.push(columns * both.width);
   }
   const [from, to] = [first.measures.channels[0], second.measures.channels[0]];
   if (from && to && from.firstSoundFrame !== null && to.firstSoundFrame !== null)
@@ -150,8 +188,4 @@ function likeness(a: Float64Array, b: Float64Array): number {
     squareB += other * other;
   }
   return product / Math.sqrt(squareA * squareB);
-}
-
-function highest(values: Float64Array): number {
-  return values.reduce((most, value) => Math.max(most, value), 0);
 }

@@ -117,6 +117,26 @@ describe('compareTracks: the same audio', { timeout: 60_000 }, () => {
     expect(sounds.framesRead()).toBeLessThan(5_000_000);
   });
 
+  it('finds the one copy among hundreds of files that all look alike', async () => {
+    let state = 1;
+    const noise = () => {
+      state = (Math.imul(state, 1_103_515_245) + 12_345) >>> 0;
+      return (state / 2 ** 31 - 1) * 0.4;
+    };
+    const alike = Object.fromEntries(
+      Array.from({ length: 300 }, (_, index) => [
+        `Hiss ${index}.wav`,
+        [Float32Array.from({ length: 24_000 }, noise)],
+      ]),
+    );
+    const copy = gained(alike['Hiss 7.wav']![0]!, 0.5);
+    const sounds = comparedSounds({ ...alike, 'Copy.wav': [copy] });
+    const { matches } = await compareTracks(sounds.tracks, sounds.read);
+    expect(matches.map(({ first, second }) => [first, second])).toEqual([
+      ['Hiss 7.wav', 'Copy.wav'],
+    ]);
+  });
+
   it('leaves out a file that has gone, and stops when told to', async () => {
     const sound = placed(loop, 0, frames);
     const sounds = comparedSounds({ 'A.wav': [sound], 'B.wav': [gained(sound, 0.5)] });
